@@ -1,0 +1,1 @@
+"""The case a person fills in: its model, its file, and changes to it."""

@@ -1,0 +1,80 @@
+"""C28: a nominal pipe size typed where an inside diameter is wanted."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from fractions import Fraction
+
+from headfall.checks.finding import Finding, Grade
+from headfall.checks.limits import limit
+from headfall.quantities.display import DisplayUnits
+from headfall.resources import read_resource
+
+RULE = "C28"
+_SOURCE = "asme_b36_10m"
+_INCH = 0.0254
+
+
+@dataclass(frozen=True, slots=True)
+class NominalSize:
+    """A nominal size whose own figure was typed: ``figure`` as it reads, ``name``, ``inside`` diameter [m]."""
+
+    figure: str
+    name: str
+    inside: float
+
+
+def nominal_size(diameter: float) -> NominalSize | None:
+    """Return the nominal size of steel pipe whose figure, in mm or in inches, equals the diameter [m]; None else.
+
+    The inside diameter is that of schedule 40, outside less two walls. Source: ``asme_b36_10m``.
+    """
+    near = limit("nominal_match").value
+    for row in read_resource("nominal_pipe.json")["sizes"]:
+        inside = (row["outside"] - 2.0 * row["wall_40"]) / 1000.0
+        if abs(diameter - row["dn"] / 1000.0) <= near:
+            return NominalSize(f"{row['dn']}\u00a0mm", f"DN\u00a0{row['dn']}", inside)
+        inches = float(sum(Fraction(part) for part in row["nps"].split()))
+        if abs(diameter - inches * _INCH) <= near:
+            return NominalSize(f"{row['nps']}\u00a0in", f"NPS\u00a0{row['nps']}", inside)
+    return None
+
+
+def check_nominal_size(
+    *, outlet: str, entry: str, diameter: float | None, display: DisplayUnits, place: str
+) -> list[Finding]:
+    """Return a hint where an outlet's diameter [m] reads like a nominal pipe size; None stands for a rectangle.
+
+    ``outlet`` is what the sentences call it, such as ``the outlet``.
+    It is an attention for the entries that are commonly made of a piece of pipe (``pieces_of_pipe`` of
+    ``nominal_pipe.json``: tubes and nozzles), where the figure of the pipe and the bore are easily taken for one
+    another. A hole in a plate is drilled or cut to its figure, and 80 mm is then just 80 mm: there it is a note.
+    Source: ``asme_b36_10m``.
+    """
+    found = None if diameter is None else nominal_size(diameter)
+    if found is None:
+        what = "is not round" if diameter is None else "does not read like a nominal pipe size"
+        grade = Grade.NO_CAUTION
+        text = f"The opening of {outlet} {what}; no caution is raised by this check."
+        advice = "It rests on the sizes entered being those of the opening itself."
+    else:
+        made_of_pipe = entry in read_resource("nominal_pipe.json")["pieces_of_pipe"]
+        grade = Grade.ATTENTION if made_of_pipe else Grade.NOTE
+        inside = display.text(found.inside, "bore")
+        article = "an" if found.name.startswith("N") else "a"
+        text = f"{found.figure} is also a nominal size: {article} {found.name} pipe is {inside} inside in schedule 40."
+        advice = f"Enter the measured inside diameter of {outlet}; the flow goes with its square."
+    return [
+        Finding(
+            rule=RULE,
+            grade=grade,
+            subject=f"nominal size at {outlet}",
+            text=text,
+            advice=advice,
+            source=_SOURCE,
+            value=diameter,
+            limit=None if found is None else found.inside,
+            kind="" if diameter is None else "bore",
+            place=place,
+        )
+    ]

@@ -1,0 +1,134 @@
+"""C13: liquid leaving uncontrolled, steady inflow; and the alarm level."""
+
+from __future__ import annotations
+
+from headfall.checks.finding import Finding, Grade
+from headfall.checks.wording import Ranged, with_range
+from headfall.quantities.display import DisplayUnits
+
+RULE = "C13"
+_SUBJECT = "inflow against overflow"
+_SOURCE = "volume_balance"
+_PLACE = "inflow.rate"
+
+
+def check_overflow(
+    *,
+    inflow: float,
+    largest_inflow: Ranged,
+    overflow: float,
+    time_to_overflow: Ranged,
+    room: float,
+    display: DisplayUnits,
+) -> list[Finding]:
+    """Return a stop where the run overflows, an attention where it could, a note on the time with the outlets shut.
+
+    ``inflow`` [m³/s]; ``largest_inflow`` is the inflow whose equilibrium stands at the overflow level ``overflow`` [m],
+    its low end with the lowest coefficients [m³/s]; ``time_to_overflow`` of the run [s], None where it ends elsewhere;
+    ``room`` is the volume between the run's highest level and overflow [m³].
+    The inflow is compared with the low end of ``largest_inflow``. Source: ``volume_balance``.
+    """
+    grade, text, advice = _against_overflow(inflow, largest_inflow, overflow, time_to_overflow, display)
+    findings = [
+        Finding(
+            rule=RULE,
+            grade=grade,
+            subject=_SUBJECT,
+            text=text,
+            advice=advice,
+            source=_SOURCE,
+            value=inflow,
+            limit=largest_inflow.low,
+            kind="flow",
+            place=_PLACE,
+        )
+    ]
+    if inflow > 0.0 and room > 0.0 and time_to_overflow.typical is None:
+        findings.append(_outlet_shut(inflow, room, display))
+    return findings
+
+
+def check_alarm_level(*, peak: float, start: float, high: float | None, display: DisplayUnits) -> list[Finding]:
+    """Return an attention where the run's highest level ``peak`` [m] stands above the alarm level ``high`` [m].
+
+    ``start`` [m] tells a run that starts above the alarm from one that rises above it. Source: ``volume_balance``.
+    """
+    if high is None:
+        return [_alarm(Grade.NOT_CHECKED, "No alarm level is entered; the peak is compared with none.", needs=True)]
+    peak_text, high_text = display.text(peak, "level"), display.text(high, "level")
+    if peak > high:
+        does = "starts at" if start >= peak else "rises to"
+        text = f"The level {does} {peak_text}, above the alarm level of {high_text}."
+        return [_alarm(Grade.ATTENTION, text, peak=peak, high=high)]
+    text = f"The peak, {peak_text}, is not above the alarm level, {high_text}; no caution is raised by this check."
+    return [_alarm(Grade.NO_CAUTION, text, peak=peak, high=high)]
+
+
+def _against_overflow(
+    inflow: float, largest: Ranged, overflow: float, time: Ranged, display: DisplayUnits
+) -> tuple[Grade, str, str]:
+    flows_in = f"With {display.text(inflow, 'flow')} flowing in it"
+    lip = display.text(overflow, "level")
+    low = largest.low or 0.0
+    holds = f"The outlets hold up to {display.text(low, 'flow')} below overflow, {lip}, with their lowest coefficients."
+    mend = "Bring the inflow below that, or make the outlet larger. Where the spill may go is for the owner to decide."
+    if time.typical is not None:
+        return Grade.STOP, f"{flows_in} overflows after {with_range(time, 'time', display)}.", f"{holds} {mend}"
+    ends = [end for end in (time.low, time.high) if end is not None]
+    if ends:
+        after = display.text(min(ends), "time")
+        text = f"{flows_in} could overflow, with the lowest coefficients after {after}."
+        return Grade.ATTENTION, text, f"{holds} {mend}"
+    if largest.typical is not None and inflow > largest.typical:
+        text = f"{flows_in} would overflow if it ran on past its stop: {lip} is below the level at which it settles."
+        return Grade.ATTENTION, text, f"{holds} Shut the inflow at the stop. {mend}"
+    if inflow > low and inflow > 0.0:
+        text = f"{flows_in} could overflow: the outlets may hold no more than {display.text(low, 'flow')}."
+        return Grade.ATTENTION, text, f"{holds} {mend}"
+    if inflow <= 0.0:
+        text = "Nothing flows in, so the level does not rise; no caution is raised by this check."
+    else:
+        text = (
+            f"{display.text(inflow, 'flow')} is not above {display.text(low, 'flow')}, the most that stays below "
+            "overflow; no caution is raised by this check."
+        )
+    return Grade.NO_CAUTION, text, f"{holds} It rests on a clean outlet and on the inflow staying as entered."
+
+
+def _outlet_shut(inflow: float, room: float, display: DisplayUnits) -> Finding:
+    return Finding(
+        rule=RULE,
+        grade=Grade.NOTE,
+        subject="outlet shut or blocked",
+        text=f"If the outlet is shut, {display.text(inflow, 'flow')} reaches overflow in "
+        f"{display.text(room / inflow, 'time')}.",
+        advice=f"It rests on {display.text(room, 'volume')} of room above the highest level of the run. See that the "
+        "inflow can be shut within that time.",
+        source=_SOURCE,
+        value=room / inflow,
+        kind="time",
+        place=_PLACE,
+    )
+
+
+def _alarm(
+    grade: Grade, text: str, *, peak: float | None = None, high: float | None = None, needs: bool = False
+) -> Finding:
+    advice = {
+        Grade.ATTENTION: "It rests on the typical coefficients. Lower the start or the inflow, or see that the alarm "
+        "is expected; whoever runs the plant decides.",
+        Grade.NO_CAUTION: "It rests on the typical coefficients and on the inflow staying as entered.",
+    }.get(grade, "Enter the alarm level to have the peak compared with it.")
+    return Finding(
+        rule=RULE,
+        grade=grade,
+        subject="peak against the alarm level",
+        text=text,
+        advice=advice,
+        source=_SOURCE,
+        value=peak,
+        limit=high,
+        kind="level" if peak is not None else "",
+        place="levels.high",
+        needs="alarm level" if needs else "",
+    )

@@ -1,0 +1,1 @@
+"""Outlets: flow at a level, one file a kind."""

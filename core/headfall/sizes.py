@@ -1,0 +1,164 @@
+"""The outlet that meets a drain time, and the listed sizes beside it."""
+
+from __future__ import annotations
+
+import numpy as np
+import numpy.typing as npt
+
+from headfall.answers import Figure, Neighbour, Sizing
+from headfall.outlet.discharge import flow_breakpoints, onset_poles, total_flow
+from headfall.quantities import DisplayUnits, duration
+from headfall.resources import read_resource
+from headfall.runs import Runs
+from headfall.solve.draw_down import run_time
+from headfall.solve.sizing import scale_for_time
+from headfall.solve.span import align_spans, cut_span
+
+Array = npt.NDArray[np.float64]
+
+_SMALLEST, _LARGEST = 1e-4, 1e4
+_HIGH, _TYPICAL, _LOW = 2, 1, 0
+
+
+def size_for_drain_time(runs: Runs, target: float, display: DisplayUnits) -> Sizing:
+    """Return the size of the first outlet that drains from start to stop in ``target`` [s], with listed neighbours."""
+    outlet = runs.system.outlets[0]
+    if runs.system.stop >= runs.system.start:
+        return _none(outlet.name, "an outlet is sized for a drain time only where the stop level lies below the start")
+    largest = _largest_scale(runs)
+    guess, slope = _first_guess(runs, target)
+    scale = scale_for_time(
+        lambda s: times_at(runs, s, (0, 1, 2)), target, np.minimum(guess, largest), _SMALLEST, largest, slope
+    )
+    if not np.isfinite(scale).all():
+        return _none(outlet.name, _why_none(runs, target, largest, display))
+    if outlet.shape != "round":
+        return Sizing("drain_time", outlet.name, Figure(None, None, None), float(scale[_TYPICAL]), "", None, (), "")
+    diameter = outlet.width * scale
+    sizes = listed_sizes()
+    low, typical, high = diameter[_HIGH], diameter[_TYPICAL], diameter[_LOW]
+    above = next((entry for entry in sizes if entry[0] >= high * (1 - 1e-9)), None)
+    smaller = [entry for entry in sizes if entry[0] < typical * (1 - 1e-9)][-1:]
+    larger = [entry for entry in sizes if entry[0] >= typical * (1 - 1e-9)][:1]
+    neighbours = _neighbours(runs, smaller + larger, largest)
+    return Sizing(
+        target="drain_time",
+        outlet=outlet.name,
+        diameter=Figure(float(typical), float(low), float(high)),
+        scale=float(scale[_TYPICAL]),
+        standard=above[1] if above else "",
+        standard_diameter=above[0] if above else None,
+        neighbours=neighbours,
+        reason="",
+    )
+
+
+def _none(outlet: str, reason: str) -> Sizing:
+    return Sizing("drain_time", outlet, Figure(None, None, None), None, "", None, (), reason)
+
+
+def listed_sizes() -> list[tuple[float, str]]:
+    """Return the listed drill and plate sizes [m] with their names, rising."""
+    data = read_resource("opening_sizes.json")
+    return [
+        (size * 1e-3, group["name"].format(size=f"{size:g}")) for group in data["groups"] for size in group["sizes_mm"]
+    ]
+
+
+def times_at(runs: Runs, scales: Array, indices: tuple[int, ...]) -> Array:
+    """Return the drain times [s] with the first outlet's sizes times each scale; infinite where the stop is missed.
+
+    ``scales`` (samples,) goes with ``indices``: which coefficients each sample takes.
+    """
+    system = runs.system
+    rows = [coefficients[list(indices)] for coefficients in runs.coefficients]
+    slack = system.tolerance
+    step = 0.02 * (system.start - system.stop)
+    probe = np.array([[system.stop], [system.stop + step]])
+    flow = total_flow(system.outlets, probe, rows, scales)
+    net = flow[0] - system.inflow
+    slope = (flow[1] - flow[0]) / step
+    with np.errstate(divide="ignore", invalid="ignore"):
+        poles = system.stop - net / slope
+    onsets = onset_poles(system.outlets, rows, system.inflow, scales).T
+    spans = []
+    reached = []
+    for scale, net_at_stop, pole, onset in zip(scales, net, poles, onsets, strict=True):
+        breaks = flow_breakpoints(system.outlets, float(scale))
+        ok = bool(net_at_stop > 0) or (system.inflow <= 0 and _down_to_plane(runs, float(scale), slack))
+        near = onset.tolist()
+        if system.inflow > 0 and np.isfinite(pole) and pole < system.stop:
+            near.append(float(pole))
+        reached.append(ok)
+        spans.append(cut_span(system.start, system.stop, [*system.profile.breakpoints, *breaks], near))
+    ok_array = np.array(reached)
+    if not ok_array.any():
+        return np.full(scales.shape, np.inf)
+    shaped = [row.reshape(-1, 1, 1) for row in rows]
+    with np.errstate(divide="ignore", invalid="ignore"):
+        times = run_time(
+            align_spans(spans),
+            system.profile.plan_area,
+            lambda level: total_flow(system.outlets, level, shaped, scales.reshape(-1, 1, 1)) - system.inflow,
+        )
+    return np.where(ok_array & np.isfinite(times) & (times > 0), times, np.inf)
+
+
+def _down_to_plane(runs: Runs, scale: float, slack: float) -> bool:
+    """Whether the stop lies at the plane of a downward opening that nothing lies below."""
+    system = runs.system
+    first = system.outlets[0]
+    edges = [(first.edges(scale)[0], first.facing), *((o.lower_edge, o.facing) for o in system.outlets[1:])]
+    heel = min(edge for edge, _ in edges)
+    return abs(system.stop - heel) <= slack and any(f == "down" and e <= heel + slack for e, f in edges)
+
+
+def _largest_scale(runs: Runs) -> float:
+    outlet = runs.system.outlets[0]
+    if outlet.facing == "down":
+        return _LARGEST
+    room = min(outlet.elevation, runs.system.profile.height - outlet.elevation)
+    return max(room / (0.5 * outlet.height), 1.0)
+
+
+def _first_guess(runs: Runs, target: float) -> tuple[Array, float]:
+    """A scale from the run as it stands, mean outflow going as scale squared; and the slope of ln t on ln scale."""
+    system = runs.system
+    guess = np.ones(3)
+    passed = runs.flow_at(0.5 * (system.start + system.stop))
+    released = float(np.diff(system.profile.volume(np.array([system.stop, system.start])))[0])
+    for index in range(3):
+        curve = runs.curves[index]
+        if runs.reaches[index] and curve.time[-1] > 0:
+            rate = released / curve.time[-1]
+            guess[index] = np.sqrt((released / target + system.inflow) / (rate + system.inflow))
+        elif passed[index] > 0:
+            guess[index] = 1.1 * np.sqrt((released / target + system.inflow) / passed[index])
+    mean = released / target
+    return guess, -2 * (mean + system.inflow) / mean
+
+
+def _neighbours(runs: Runs, sizes: list[tuple[float, str]], largest: float) -> tuple[Neighbour, ...]:
+    width = runs.system.outlets[0].width
+    sizes = [entry for entry in sizes if entry[0] <= largest * width * (1 + 1e-9)]
+    if not sizes:
+        return ()
+    scales = np.repeat([size / width for size, _ in sizes], 3)
+    times = times_at(runs, scales, (0, 1, 2) * len(sizes)).reshape(-1, 3)
+    found = []
+    for (size, name), row in zip(sizes, times, strict=True):
+        low, typical, high = (float(t) if np.isfinite(t) else None for t in (row[_HIGH], row[_TYPICAL], row[_LOW]))
+        found.append(Neighbour(name, size, Figure(typical, low, high)))
+    return tuple(found)
+
+
+def _why_none(runs: Runs, target: float, largest: float, display: DisplayUnits) -> str:
+    slowest = times_at(runs, np.full(3, _SMALLEST), (0, 1, 2))
+    if np.isfinite(slowest).any() and slowest.min() <= target:
+        return f"the other outlets alone drain it in {duration(float(slowest[_TYPICAL]))}"
+    fastest = times_at(runs, np.full(3, largest), (0, 1, 2))
+    outlet = runs.system.outlets[0]
+    size = display.text(outlet.height * largest, "bore")
+    if np.isfinite(fastest[_LOW]):
+        return f"even {size}, the largest that fits at its height, takes {duration(float(fastest[_LOW]))}"
+    return f"even {size}, the largest that fits at its height, does not reach the stop level over the whole range"

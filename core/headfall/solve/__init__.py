@@ -1,0 +1,1 @@
+"""Solvers: any plan area and any flow against level, no vessels, outlets or words."""
