@@ -1,0 +1,94 @@
+"""A field with a list of choices; the wheel does not change it by accident."""
+
+from __future__ import annotations
+
+from PySide6.QtCore import QPointF, QRectF, Qt, Signal
+from PySide6.QtGui import QFocusEvent, QKeyEvent, QPainter, QPaintEvent, QPalette, QPen, QPolygonF, QWheelEvent
+from PySide6.QtWidgets import QComboBox, QStyle, QStyleOptionComboBox, QStylePainter, QWidget
+
+from headfall_app.document import Document
+from headfall_app.entry.changes import choose, chosen, words_of
+from headfall_app.entry.field import Field
+from headfall_app.entry.plan import Row
+
+_ARROW = 20
+_OPENING_KEYS = (
+    Qt.Key.Key_Return,
+    Qt.Key.Key_Enter,
+    Qt.Key.Key_Space,
+    Qt.Key.Key_Up,
+    Qt.Key.Key_Down,
+    Qt.Key.Key_PageUp,
+    Qt.Key.Key_PageDown,
+    Qt.Key.Key_Home,
+    Qt.Key.Key_End,
+)
+
+
+class ChoiceBox(QComboBox):
+    """A combo box whose arrow is drawn in the colour of its text and which leaves the wheel to the page."""
+
+    entered = Signal()
+
+    def __init__(self, parent: QWidget | None = None) -> None:
+        super().__init__(parent)
+        self.setFocusPolicy(Qt.FocusPolicy.StrongFocus)
+        self.setSizeAdjustPolicy(QComboBox.SizeAdjustPolicy.AdjustToMinimumContentsLengthWithIcon)
+        self.setMinimumContentsLength(4)
+
+    def wheelEvent(self, event: QWheelEvent) -> None:
+        event.ignore()
+
+    def keyPressEvent(self, event: QKeyEvent) -> None:
+        # Passing through a list would reshape the case at every line on the way: the list opens instead.
+        if event.key() in _OPENING_KEYS:
+            self.showPopup()
+        else:
+            super().keyPressEvent(event)
+
+    def focusInEvent(self, event: QFocusEvent) -> None:
+        super().focusInEvent(event)
+        self.entered.emit()
+
+    def paintEvent(self, event: QPaintEvent) -> None:
+        painter, option = QStylePainter(self), QStyleOptionComboBox()
+        self.initStyleOption(option)
+        painter.drawComplexControl(QStyle.ComplexControl.CC_ComboBox, option)
+        painter.setPen(option.palette.color(QPalette.ColorRole.Text))
+        box = self.rect().adjusted(8, 0, -_ARROW - 2, 0)
+        text = self.fontMetrics().elidedText(self.currentText(), Qt.TextElideMode.ElideRight, box.width())
+        painter.drawText(box, Qt.AlignmentFlag.AlignVCenter, text)
+        _draw_arrow(painter, QRectF(self.width() - _ARROW, 0, _ARROW - 4, self.height()))
+
+
+def _draw_arrow(painter: QPainter, box: QRectF) -> None:
+    painter.setRenderHint(QPainter.RenderHint.Antialiasing)
+    painter.setPen(QPen(painter.pen().color(), 1.5))
+    middle = box.center()
+    painter.drawPolyline(QPolygonF([middle + QPointF(-4, -2), middle + QPointF(0, 2), middle + QPointF(4, -2)]))
+
+
+class ChoiceField(Field):
+    """A label and a list; choosing changes the case in place and keeps what still applies."""
+
+    def __init__(self, row: Row, document: Document, parent: QWidget | None = None) -> None:
+        self.box = ChoiceBox()
+        for value, text in row.choices:
+            self.box.addItem(text, value)
+        super().__init__(row, document, self.box, parent)
+        self.hide_echo()
+        self.box.activated.connect(self._choose)
+        self.box.entered.connect(self.point)
+
+    def _choose(self, index: int) -> None:
+        choose(self.document, self.row, str(self.box.itemData(index)))
+
+    def refresh(self) -> None:
+        """Show what the document holds."""
+        value = chosen(self.document.case, self.row)
+        for index, (choice, text) in enumerate(self.row.choices):
+            self.box.setItemText(index, words_of(self.document.case, self.row, choice, text))
+        self.box.setCurrentIndex(self.box.findData(value or self.row.default))
+        self.set_untyped(not value)
+        wrong = self.document.wrong.get(self.row.path)
+        self.show_reason(wrong.sentence if wrong else "")

@@ -1,0 +1,28 @@
+"""What stands beside a typed quantity: the same value in the units of the answers."""
+
+from __future__ import annotations
+
+from headfall.case.model import Path
+from headfall.quantities import DisplayUnits, Quantity
+from headfall.quantities.units import known_unit
+from headfall_app.entry.plan import Row
+from headfall_app.words import key_of, words
+
+
+def kind_of(path: Path, dimension: str) -> str:
+    """Return the display kind of an entry."""
+    kinds = words()["kinds"]
+    kind: str = kinds.get(key_of(path)) or kinds.get(dimension, dimension)
+    return kind
+
+
+def echo_of(value: Quantity, row: Row, display: DisplayUnits) -> str:
+    """Return the value in the units of the answers; empty where it was typed in them."""
+    if value.dimension == "time":
+        return "" if value.unit == "s" else f"{value.value:.6g}\u00a0s"
+    if value.value == 0.0 and value.dimension != "temperature":
+        return ""
+    kind = kind_of(row.path, value.dimension)
+    if known_unit(value.unit, value.dimension) == known_unit(display.unit(kind), value.dimension):
+        return ""
+    return display.text(value.value, kind)

@@ -1,0 +1,102 @@
+"""What every row of the entry panel has: a label, an editor, an echo and a place for a reason."""
+
+from __future__ import annotations
+
+from PySide6.QtCore import Qt
+from PySide6.QtWidgets import QGridLayout, QSizePolicy, QWidget
+
+from headfall_app.document import Document
+from headfall_app.entry.plan import Row
+from headfall_app.label import label
+from headfall_app.paint.fonts import font
+from headfall_app.words import name_of
+
+LABEL_WIDTH, ECHO_WIDTH, ROW_HEIGHT, FIELD_HEIGHT, GAP = 92, 64, 30, 26, 8
+
+
+class Field(QWidget):
+    """One row; it shows what the document holds at its path and changes nothing else."""
+
+    def __init__(self, row: Row, document: Document, editor: QWidget, parent: QWidget | None = None) -> None:
+        super().__init__(parent)
+        self.row, self.document, self.editor = row, document, editor
+        self._label = label(text=row.label)
+        self._label.setFixedWidth(LABEL_WIDTH)
+        self._label.setBuddy(editor)
+        self._echo = label("echo", 12)
+        self._echo.setFixedWidth(ECHO_WIDTH)
+        self._reason = label("reason", 12, wraps=True)
+        self._reason.setSizePolicy(QSizePolicy.Policy.Ignored, QSizePolicy.Policy.Minimum)
+        self._reason.hide()
+        editor.setFont(font(13))
+        editor.setFixedHeight(FIELD_HEIGHT)
+        editor.setMinimumWidth(40)
+        editor.setAccessibleName(name_of(row.path) or row.label)
+        editor.setToolTip(row.tip)
+        editor.setAccessibleDescription(row.tip)
+        self.setFocusProxy(editor)
+        self._lay_out()
+
+    def _lay_out(self) -> None:
+        grid = self._grid = QGridLayout(self)
+        grid.setContentsMargins(0, 0, 0, ROW_HEIGHT - FIELD_HEIGHT)
+        grid.setHorizontalSpacing(GAP)
+        grid.setVerticalSpacing(2)
+        grid.addWidget(self._label, 0, 0, Qt.AlignmentFlag.AlignVCenter)
+        grid.addWidget(self.editor, 0, 1)
+        grid.addWidget(self._echo, 0, 2, Qt.AlignmentFlag.AlignVCenter)
+        grid.addWidget(self._reason, 1, 0, 1, 3)
+        grid.setColumnStretch(1, 1)
+
+    def refresh(self) -> None:
+        """Show what the document holds."""
+        raise NotImplementedError
+
+    def point(self) -> None:
+        """Tell the document that this entry has the cursor."""
+        self.document.pointed = self.row.path
+
+    def set_echo(self, text: str) -> None:
+        """Say something beside the editor."""
+        if self._echo.text() != text:
+            self._echo.setText(text)
+            self.editor.setAccessibleDescription(" ".join(filter(None, (self.row.tip, text))))
+
+    def hide_echo(self) -> None:
+        """Give the echo's width to the editor."""
+        self._echo.hide()
+        self._grid.removeWidget(self._echo)
+        self._grid.addWidget(self.editor, 0, 1, 1, 2)
+
+    def show_reason(self, sentence: str) -> None:
+        """Mark the row as wrong and say why under it; an empty sentence takes the mark away."""
+        self._mark("wrong", bool(sentence))
+        if self._reason.text() != sentence:
+            self._reason.setText(sentence)
+            self._reason.setVisible(bool(sentence))
+            self.editor.setAccessibleDescription(sentence or self.row.tip)
+
+    @property
+    def reason(self) -> str:
+        """The sentence under the row; empty where there is none."""
+        return self._reason.text()
+
+    @property
+    def echo(self) -> str:
+        """The words beside the editor."""
+        return self._echo.text()
+
+    def set_lit(self, lit: bool) -> None:
+        """Mark the row as the one pointed at in the drawing."""
+        self._mark("lit", lit)
+
+    def set_untyped(self, untyped: bool) -> None:
+        """Mark the row as one where nothing was typed."""
+        self._mark("untyped", untyped)
+
+    def _mark(self, name: str, on: bool) -> None:
+        if bool(self.editor.property(name)) != on:
+            self.editor.setProperty(name, on)
+            self.editor.style().unpolish(self.editor)
+            self.editor.style().polish(self.editor)
+            self.editor.update()

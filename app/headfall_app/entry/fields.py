@@ -1,0 +1,137 @@
+"""The fields a person types into: quantities, plain numbers and free text."""
+
+from __future__ import annotations
+
+from PySide6.QtWidgets import QWidget
+
+from headfall.quantities import Quantity
+from headfall_app.document import Document
+from headfall_app.entry.echo import echo_of
+from headfall_app.entry.field import Field
+from headfall_app.entry.line import EntryLine
+from headfall_app.entry.plan import Row
+from headfall_app.entry.stepping import number_in, stepped, written
+from headfall_app.entry.typed import Refused, read_typed, unit_for, value_or_none
+from headfall_app.words import key_of, lowered, words
+
+
+def _change_of(row: Row) -> str:
+    return f"Change the {lowered(row.label)}"
+
+
+class LineField(Field):
+    """A label and a line; what was typed stays in the line until it can be read, with the reason under it."""
+
+    def __init__(self, row: Row, document: Document, parent: QWidget | None = None) -> None:
+        self.line = EntryLine()
+        super().__init__(row, document, self.line, parent)
+        self.line.setPlaceholderText(row.default.replace("deg", "°") or words()["untyped"].get(key_of(row.path), ""))
+        self.line.committed.connect(self.commit)
+        self.line.reverted.connect(self.revert)
+        self.line.stepped.connect(self.step)
+        self.line.entered.connect(self.point)
+        self.line.left.connect(document.end_gesture)
+        self._shown = ""
+
+    def refresh(self) -> None:
+        """Show what the document holds; a text that is being typed stays unless its entry was changed elsewhere."""
+        wrong = self.document.wrong.get(self.row.path)
+        text = wrong.text if wrong else self.text_of(value_or_none(self.document.case, self.row.path))
+        if text != self._shown or not self.line.isModified():
+            self._shown = text
+            if self.line.text() != text:
+                self.line.setText(text)
+            self.line.setModified(False)
+        self.show_echo()
+        self.show_reason(wrong.sentence if wrong else "")
+
+    def commit(self) -> None:
+        """Read the line: a good text goes into the case, another one is kept beside its reason."""
+        typed, path, what = self.line.text().strip(), self.row.path, _change_of(self.row)
+        self.line.setModified(False)
+        self._shown = typed
+        try:
+            self.document.set(path, read_typed(self.document.case, self.row, typed), what)
+        except Refused as refusal:
+            self.document.set_wrong(path, typed, str(refusal), what)
+        self.refresh()
+
+    def revert(self) -> None:
+        """Put back what stood before: first the text the document holds, then the last good value."""
+        if self.line.isModified():
+            self.line.setText(self._shown)
+        elif self.row.path in self.document.wrong:
+            value = value_or_none(self.document.case, self.row.path)
+            self.document.set(self.row.path, value, f"Put back the {lowered(self.row.label)}")
+        self.line.selectAll()
+
+    def step(self, steps: int) -> None:
+        """Step the number; one stay in the field is one step of undo."""
+        if self.row.path in self.document.wrong:
+            return
+        text = self.stepped_text(self.line.text() or self.row.default, steps)
+        try:
+            value = read_typed(self.document.case, self.row, text) if text else None
+        except Refused:
+            return
+        if text:
+            gesture = ("step", self.row.path)
+            self.document.set(self.row.path, value, _change_of(self.row), gesture)
+
+    def text_of(self, value: object) -> str:
+        """Return the text of a value as the line shows it; empty where nothing was typed."""
+        return "" if value is None else str(value)
+
+    def stepped_text(self, text: str, steps: int) -> str:
+        """Return the text some steps up; empty where there is nothing to step."""
+        return ""
+
+    def show_echo(self) -> None:
+        """Say beside the line what its value is in the units of the answers, or that it is a default."""
+        default = not self._shown and self.row.default and self.row.kind != "text"
+        self.set_untyped(not self._shown)
+        self.set_echo("default" if default else self.echo_text())
+
+    def echo_text(self) -> str:
+        """Return the typed value in the units of the answers; empty where it is typed in them."""
+        return ""
+
+
+class QuantityField(LineField):
+    """A quantity with its unit; a bare number takes the unit that stood here before."""
+
+    def text_of(self, value: object) -> str:
+        return value.text if isinstance(value, Quantity) else ""
+
+    def stepped_text(self, text: str, steps: int) -> str:
+        unit = unit_for(self.document.case, self.row)
+        number = number_in(text, unit)
+        if number is None:
+            return ""
+        return f"{written(stepped(number, steps), text)} {unit}"
+
+    def echo_text(self) -> str:
+        value = value_or_none(self.document.case, self.row.path)
+        wrong = self.row.path in self.document.wrong
+        return echo_of(value, self.row, self.document.display) if isinstance(value, Quantity) and not wrong else ""
+
+
+class NumberField(LineField):
+    """A plain number without a unit."""
+
+    def text_of(self, value: object) -> str:
+        return f"{value:.10g}" if isinstance(value, (int, float)) else ""
+
+    def stepped_text(self, text: str, steps: int) -> str:
+        number = number_in(text, "")
+        if number is None:
+            return ""
+        return written(number + steps if self.row.whole else stepped(number, steps), text)
+
+
+class TextField(LineField):
+    """Free text; it takes the whole width, having no echo."""
+
+    def __init__(self, row: Row, document: Document, parent: QWidget | None = None) -> None:
+        super().__init__(row, document, parent)
+        self.hide_echo()

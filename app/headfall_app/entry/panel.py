@@ -1,0 +1,161 @@
+"""The entry panel: every entry of the case, grouped as on a drawing."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from itertools import pairwise
+
+from PySide6.QtCore import QEvent, Qt
+from PySide6.QtWidgets import QApplication, QScrollArea, QVBoxLayout, QWidget
+
+from headfall.case.model import Path
+from headfall_app.document import Document
+from headfall_app.entry.field import Field
+from headfall_app.entry.group import GroupBox
+from headfall_app.entry.plan import Group, groups_of
+from headfall_app.paint.theme import Theme
+
+WIDTH, NARROW_WIDTH, WIDE_WINDOW = 300, 292, 1400
+
+
+class EntryPanel(QWidget):
+    """The groups in a column that scrolls; follows the document and lights the entry that is pointed at."""
+
+    def __init__(self, document: Document, theme: Theme, parent: QWidget | None = None) -> None:
+        super().__init__(parent)
+        self.setObjectName("entry")
+        self.setAttribute(Qt.WidgetAttribute.WA_StyledBackground)
+        self.theme = theme
+        self._document = document
+        self._boxes: list[GroupBox] = []
+        self._shown: tuple[Group, ...] = ()
+        self._column_widget = QWidget()
+        self._column_widget.setObjectName("entry")
+        self._column = QVBoxLayout(self._column_widget)
+        self._column.setSpacing(0)
+        self._column.addStretch(1)
+        self._area = QScrollArea(self)
+        self._area.setObjectName("entry")
+        self._area.setWidgetResizable(True)
+        self._area.setHorizontalScrollBarPolicy(Qt.ScrollBarPolicy.ScrollBarAlwaysOff)
+        self._area.setFocusPolicy(Qt.FocusPolicy.NoFocus)
+        self._area.setWidget(self._column_widget)
+        layout = QVBoxLayout(self)
+        layout.setContentsMargins(0, 0, 0, 0)
+        layout.addWidget(self._area)
+        self._area.verticalScrollBar().rangeChanged.connect(self._set_margins)
+        self.set_narrow(False)
+        document.changed.connect(self._follow)
+        document.answers_changed.connect(self._follow_answers)
+        document.pointed_changed.connect(self._light)
+        self._follow()
+
+    def set_theme(self, theme: Theme) -> None:
+        """Take the colours of another theme; the style sheet of the window brings them."""
+        self.theme = theme
+
+    def set_narrow(self, narrow: bool) -> None:
+        """Take the width for a window narrower than 1400."""
+        self._is_narrow = narrow
+        self.setFixedWidth(NARROW_WIDTH if narrow else WIDTH)
+        self._set_margins()
+
+    def _set_margins(self, *_range: int) -> None:
+        # The scroll bar stands inside the right margin, so that the fields keep their width when it comes and goes.
+        bar = self._area.verticalScrollBar()
+        taken = bar.sizeHint().width() if bar.maximum() > 0 else 0
+        self._column.setContentsMargins(16 if self._is_narrow else 20, 4, 20 - taken, 12)
+
+    def fields(self) -> Iterator[Field]:
+        """All fields, from top to bottom."""
+        for box in self._boxes:
+            yield from box.fields()
+
+    def groups(self) -> tuple[GroupBox, ...]:
+        """All groups, from top to bottom."""
+        return tuple(self._boxes)
+
+    def field_at(self, path: Path) -> Field | None:
+        """Return the field of an entry; None where none is shown."""
+        return next((field for field in self.fields() if field.row.path == path), None)
+
+    def go_to(self, path: Path) -> None:
+        """Unfold the group of an entry, bring it into view and put the cursor there."""
+        box = self.box_of(path)
+        field = self.field_at(path)
+        if box is None:
+            return
+        box.heading.set_folded(False)
+        (field.editor if field else box).setFocus(Qt.FocusReason.OtherFocusReason)
+        self._bring_into_view(field or box)
+
+    def open_group(self, box: GroupBox) -> None:
+        """Unfold a group, bring it to the top and put the cursor into its first field."""
+        box.heading.set_folded(False)
+        first = next(box.fields(), None)
+        self._settle()
+        self._area.verticalScrollBar().setValue(box.y())
+        if first:
+            first.editor.setFocus(Qt.FocusReason.TabFocusReason)
+
+    def box_of(self, path: Path) -> GroupBox | None:
+        """Return the group an entry stands in."""
+        fits = [box for box in self._boxes if box.group.path and path[: len(box.group.path)] == box.group.path]
+        return fits[0] if fits else self._boxes[-1] if len(path) == 1 else None
+
+    def _follow(self) -> None:
+        groups = groups_of(self._document.case)
+        if groups == self._shown:
+            for box in self._boxes:
+                box.refresh()
+            return
+        if [group.key for group in groups] != [box.group.key for box in self._boxes]:
+            self._arrange(groups)
+        for box, group in zip(self._boxes, groups, strict=True):
+            box.show_rows(group)
+            box.refresh()
+        self._shown = groups
+        self._order_tabs()
+        self._follow_answers()
+
+    def _order_tabs(self) -> None:
+        stops = [stop for box in self._boxes for stop in box.tab_stops()]
+        for one, other in pairwise(stops):
+            QWidget.setTabOrder(one, other)
+
+    def _arrange(self, groups: tuple[Group, ...]) -> None:
+        kept = {box.group.key: box for box in self._boxes}
+        while self._column.count():
+            self._column.takeAt(0)
+        self._boxes = [
+            kept.pop(group.key) if group.key in kept else GroupBox(group, self._document) for group in groups
+        ]
+        for box in self._boxes:
+            self._column.addWidget(box)
+        self._column.addStretch(1)
+        for box in kept.values():
+            box.hide()
+            box.setParent(None)
+            box.deleteLater()
+
+    def _follow_answers(self) -> None:
+        for box in self._boxes:
+            box.refresh_answers()
+
+    def _light(self) -> None:
+        pointed = self._document.pointed
+        for field in self.fields():
+            field.set_lit(field.row.path == pointed)
+        lit = self.field_at(pointed) if pointed else None
+        if lit and not lit.editor.hasFocus():
+            self._bring_into_view(lit)
+
+    def _bring_into_view(self, widget: QWidget) -> None:
+        self._settle()
+        self._area.ensureWidgetVisible(widget, 0, 40)
+
+    def _settle(self) -> None:
+        # A group unfolded just now has its height only after the event loop has turned, unless it is asked for here.
+        QApplication.sendPostedEvents(None, QEvent.Type.LayoutRequest)
+        self._column.activate()
+        self._column_widget.resize(self._column_widget.width(), self._column.sizeHint().height())

@@ -1,0 +1,128 @@
+"""The answers as a table a person can read in a terminal; no Qt."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from textwrap import wrap
+
+from headfall.answers import Answers, Figure, Sizing
+from headfall.checks.finding import Grade
+from headfall.quantities import DisplayUnits, display_units
+
+_LABEL, _VALUE, _LINE = 30, 20, 100
+
+
+def figures_table(answers: Answers, display: DisplayUnits | None = None) -> str:
+    """Return the answers as lines of text, in the case's display units unless others are given."""
+    display = display or display_units(answers.case.units or "metric")
+    lines = [_heading(answers), ""]
+    for block in (_vessel, _draw_down, _equilibrium, _sizing, _coefficients):
+        rows = list(block(answers, display))
+        lines += [*rows, ""] if rows else []
+    lines += _checks(answers)
+    # A no-break space would not be found by somebody who searches the output with a plain one.
+    return "\n".join(lines).replace("\u00a0", " ").rstrip() + "\n"
+
+
+def _heading(answers: Answers) -> str:
+    case = answers.case
+    parts = [case.title or "Untitled case", case.tag or "", f"revision {case.revision}" if case.revision else ""]
+    return "  ".join(filter(None, parts))
+
+
+def _row(label: str, value: str, remark: str = "") -> str:
+    return f"{label:<{_LABEL}}{value:<{_VALUE}}{remark}".rstrip()
+
+
+def _range(figure: Figure, kind: str, display: DisplayUnits) -> str:
+    if figure.low is None or figure.high is None:
+        reached = [end for end in (figure.low, figure.high) if end is not None]
+        return f"from {display.text(reached[0], kind)}" if reached and figure.typical is not None else ""
+    return f"{display.text(figure.low, kind)} to {display.text(figure.high, kind)}"
+
+
+def _vessel(answers: Answers, display: DisplayUnits) -> Iterator[str]:
+    vessel, system = answers.vessel, answers.system
+    yield _row("Height of the vessel", display.text(vessel.height, "level"))
+    yield _row("Capacity", display.text(vessel.capacity, "volume"))
+    for name, level, volume in (
+        ("Start level", system.start, vessel.start_volume),
+        ("Stop level", system.stop, vessel.stop_volume),
+        ("Overflow level", system.overflow, vessel.overflow_volume),
+    ):
+        yield _row(name, display.text(level, "level"), f"{display.text(volume, 'volume')} below it")
+    yield _row("Inflow", display.text(system.inflow, "flow"))
+
+
+def _draw_down(answers: Answers, display: DisplayUnits) -> Iterator[str]:
+    run = answers.draw_down
+    if run.time.typical is None:
+        yield _row("Time to the stop level", "never reached", run.reason)
+    else:
+        yield _row("Time to the stop level", display.text(run.time.typical, "time"), _range(run.time, "time", display))
+    if run.time_to_overflow.typical is not None:
+        value = display.text(run.time_to_overflow.typical, "time")
+        yield _row("Time to overflow", value, _range(run.time_to_overflow, "time", display))
+    if run.released is not None:
+        yield _row("Released", display.text(run.released, "volume"))
+    start = run.outflow_at_start
+    if start.typical is not None:
+        yield _row("Outflow at start", display.text(start.typical, "flow"), _range(start, "flow", display))
+
+
+def _equilibrium(answers: Answers, display: DisplayUnits) -> Iterator[str]:
+    rest = answers.equilibrium
+    if rest.level.typical is None:
+        yield _row("Settles at", "above the top", rest.reason)
+    else:
+        remark = rest.reason or _range(rest.level, "level", display)
+        yield _row("Settles at", display.text(rest.level.typical, "level"), remark)
+    if rest.time_to_98_percent is not None:
+        yield _row("Within 2 % of it after", display.text(rest.time_to_98_percent, "time"))
+    largest = rest.largest_inflow
+    if largest.typical is not None:
+        value = display.text(largest.typical, "flow")
+        yield _row("Largest inflow held", value, _range(largest, "flow", display))
+
+
+def _sizing(answers: Answers, display: DisplayUnits) -> Iterator[str]:
+    for sizing in answers.sizing:
+        yield from _one_sizing(sizing, display)
+
+
+def _one_sizing(sizing: Sizing, display: DisplayUnits) -> Iterator[str]:
+    label = f"Outlet for the target, {sizing.outlet}"
+    if sizing.diameter.typical is not None:
+        value = display.text(sizing.diameter.typical, "bore")
+        yield _row(label, value, _range(sizing.diameter, "bore", display))
+    elif sizing.scale is not None:
+        yield _row(label, f"{sizing.scale:.3g} of its size")
+    else:
+        yield _row(label, "none", sizing.reason)
+    for neighbour in sizing.neighbours:
+        time = neighbour.achieved_time
+        value = "never reaches it" if time.typical is None else display.text(time.typical, "time")
+        chosen = "smallest that meets it" if neighbour.standard == sizing.standard else ""
+        yield _row(
+            f"  with {neighbour.standard}", value, "  ".join(filter(None, (_range(time, "time", display), chosen)))
+        )
+
+
+def _coefficients(answers: Answers, display: DisplayUnits) -> Iterator[str]:
+    for used in answers.coefficients:
+        value = f"{used.low:.3g} · {used.typical:.3g} · {used.high:.3g}"
+        yield _row(f"Coefficient, {used.outlet}", value, f"source {used.source}")
+
+
+def _checks(answers: Answers) -> list[str]:
+    lines = ["Checks"]
+    for finding in answers.findings:
+        if finding.grade <= Grade.NOTE:
+            said = wrap(f"{finding.text} {finding.advice}", _LINE - 12)
+            lines += [f"{finding.grade.word:<12}{said[0]}", *(f"{'':<12}{line}" for line in said[1:])]
+    for grade in (Grade.NO_CAUTION, Grade.NOT_CHECKED):
+        named = [finding.subject for finding in answers.findings if finding.grade == grade]
+        if named:
+            said = wrap(f"{grade.word}: {'; '.join(named)}.", _LINE)
+            lines += said
+    return lines

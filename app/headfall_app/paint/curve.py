@@ -1,0 +1,223 @@
+"""Level against time: grid, range, curve, the end of the run and the time cursor."""
+
+from __future__ import annotations
+
+import numpy as np
+from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
+from PySide6.QtGui import QPainter
+
+from headfall.answers import Curve
+from headfall_app.paint import lettering
+from headfall_app.paint.fonts import text_width
+from headfall_app.paint.layout import Frame
+from headfall_app.paint.scene import Scene, level_at
+from headfall_app.paint.staff import grid_levels
+from headfall_app.paint.strokes import fill, level_line, pen, plumb_line, polygon, ribbon
+from headfall_app.paint.theme import Theme
+from headfall_app.paint.ticks import mark_text
+
+WIDTH = 2.2
+
+
+def paint_grid(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Paint the grid at the staff's numbers and the time marks."""
+    if frame.plot is None:
+        return
+    left, top, right, bottom = frame.plot
+    grid = pen(theme.colour("grid"))
+    for level in (*grid_levels(frame, scene), frame.vessel_height):
+        level_line(painter, left, right, frame.row(level), grid)
+    for value in frame.times.marks:
+        plumb_line(painter, frame.time_x(value * frame.times.unit), round(top), bottom, grid)
+    plumb_line(painter, right, round(top), bottom, grid)
+
+
+def curve_points(frame: Frame, run: Curve, to_end: bool = False) -> tuple[np.ndarray, np.ndarray]:
+    """Return a run on the page, carried on level to the end of the axis where asked."""
+    time, level = run.time, run.level
+    if to_end and run.ends == "settled" and time[-1] < frame.times.end:
+        time, level = np.append(time, frame.times.end), np.append(level, level[-1])
+    left, _, right, _ = frame.plot or (0.0, 0.0, 1.0, 0.0)
+    return left + time * ((right - left) / frame.times.end), frame.bottom + 0.5 - level * frame.pixels_per_metre
+
+
+def paint_range(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Paint what lies between the runs of the lowest and the highest coefficient, and the settling strip."""
+    if frame.plot is None:
+        return
+    if scene.settling is not None:
+        low, high = scene.settling
+        strip = QRectF(
+            frame.flags_right, frame.y(high), frame.plot[2] - frame.flags_right, frame.y(low) - frame.y(high)
+        )
+        painter.fillRect(strip, theme.mixed("band", "surface", 0.6))
+    slow_x, slow_y = curve_points(frame, scene.curve_low, True)
+    fast_x, fast_y = curve_points(frame, scene.curve_high, True)
+    shape = polygon(np.concatenate((slow_x, fast_x[::-1])), np.concatenate((slow_y, fast_y[::-1])))
+    fill(painter, shape, theme.colour("band"), smooth=theme.is_paper)
+    edge = theme.colour("band_edge")
+    painter.setPen(pen(edge, 1.0))
+    for x, y in ((slow_x, slow_y), (fast_x, fast_y)):
+        painter.drawPolyline(polygon(x, y))
+
+
+def paint_not_defended(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Hatch what lies below the level down to which the curve is defended."""
+    if scene.not_defended is None or frame.plot is None:
+        return
+    left, _, right, bottom = frame.plot
+    top = float(frame.row(scene.not_defended))
+    painter.save()
+    painter.setClipRect(QRectF(left, top, right - left, bottom - top), Qt.ClipOperation.IntersectClip)
+    painter.setPen(pen(theme.mixed("edge", "surface", 0.55), 1.0))
+    tall = bottom - top
+    painter.drawLines([QLineF(x, bottom, x + tall, top) for x in np.arange(left - tall, right, 8.0)])
+    painter.restore()
+
+
+def paint_run(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Paint the typical run, dashed where it is not defended."""
+    x, y = curve_points(frame, scene.curve)
+    accent = theme.colour("accent")
+    if scene.not_defended is None:
+        fill(painter, ribbon(x, y, WIDTH), accent)
+        return
+    held = scene.curve.level >= scene.not_defended
+    if held.any():
+        last = int(np.nonzero(held)[0][-1]) + 2
+        first = int(np.nonzero(held)[0][0])
+        fill(painter, ribbon(x[max(first - 1, 0) : last], y[max(first - 1, 0) : last], WIDTH), accent)
+        loose = (x[last - 1 :], y[last - 1 :]) if first == 0 else (x[: first + 1], y[: first + 1])
+    else:
+        loose = (x, y)
+    painter.setPen(pen(accent, WIDTH, "not_defended"))
+    painter.drawPolyline(polygon(*loose))
+
+
+def paint_not_defended_text(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Write down to which level the curve is defended, at the left, where no curve runs."""
+    if scene.not_defended is None or frame.plot is None:
+        return
+    left, _, _, bottom = frame.plot
+    edge = frame.row(scene.not_defended)
+    end = frame.time(left + 14.0 + text_width(scene.not_defended_text, 11))
+    runs = (scene.curve_low, scene.curve_high)
+    lowest = max(frame.y(level_at(run, time)) for run in runs for time in (0.0, end))
+    inside = bottom - edge > 26.0 and lowest > edge - 20.0
+    at = QPointF(left + 9.0, max(edge + 13.0, min(lowest + 14.0, bottom - 10.0)) if inside else edge - 11.0)
+    lettering.write(painter, at, scene.not_defended_text, theme.colour("ink"), 11, plate=theme.colour("surface"))
+
+
+def paint_arrival(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Paint the whisker from the shortest to the longest time, the ring at the typical one, and its text."""
+    arrival = scene.arrival
+    if arrival is None or frame.plot is None:
+        return
+    colour = theme.colour("limit" if arrival.overflows else "ink")
+    row = frame.row(arrival.level) + 0.5
+    ring = frame.time_x(arrival.typical)
+    known = [frame.time_x(time) for time in (arrival.low, arrival.high) if time is not None]
+    painter.setPen(pen(colour, 1.4))
+    if len(known) == 2:
+        painter.drawLine(QLineF(known[0], row, known[1], row))
+        for end in known:
+            painter.drawLine(QLineF(end, row - 5.0, end, row + 5.0))
+    _arrival_text(painter, frame, scene, theme, ring, row)
+    painter.setPen(pen(theme.colour("limit" if arrival.overflows else "accent"), 2.0))
+    painter.setBrush(theme.colour("surface"))
+    painter.drawEllipse(QPointF(ring, row), 4.0, 4.0)
+    painter.setBrush(Qt.BrushStyle.NoBrush)
+
+
+def _arrival_text(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, ring: float, row: float) -> None:
+    arrival = scene.arrival
+    assert arrival is not None and frame.plot is not None
+    left, top, right, bottom = frame.plot
+    half = 0.5 * text_width(arrival.text, 12, 600) + 4.0
+    middle = min(max(ring, left + half), right - half) if right - left > 2.0 * half else 0.5 * (left + right)
+    runs = (scene.curve_low, scene.curve_high, scene.curve)
+    beside = [frame.y(level_at(run, frame.time(middle - half - 6.0))) for run in runs]
+    lines = [frame.row(mark.level) for mark in scene.marks if mark.key != "now"]
+    step = 2.0 if arrival.rising else -2.0
+    at = max(row + 28.0, max(beside) + 15.0) if arrival.rising else min(row - 28.0, min(beside) - 15.0)
+    while top + 10.0 < at < bottom - 10.0 and any(abs(at - line) < 11.0 for line in lines):
+        at += step
+    at = min(max(at, top + 10.0), bottom - 10.0)
+    ink = theme.colour("limit" if arrival.overflows else "ink")
+    painter.setPen(pen(theme.colour("limit" if arrival.overflows else "muted"), 1.0))
+    painter.drawLine(QLineF(round(ring) + 0.5, row, round(ring) + 0.5, at))
+    plate = theme.colour("surface")
+    lettering.write(painter, QPointF(middle, at), arrival.text, ink, 12, 600, lettering.CENTRE, plate=plate)
+
+
+def paint_remark(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Write what happens instead of an arrival, clear of curve and level lines."""
+    if not scene.remark or frame.plot is None:
+        return
+    left, top, right, bottom = frame.plot
+    text = lettering.elided(scene.remark, right - left - 8.0, 12, 600)
+    level = scene.settles_at if scene.settles_at is not None else scene.surface
+    row = float(frame.row(level))
+    lines = [frame.row(mark.level) for mark in scene.marks if mark.key != "now"]
+    runs = (scene.curve_low, scene.curve_high, scene.curve)
+    place = frame.time(right - 8.0 - text_width(text, 12, 600))
+    beside = [row] + [frame.y(level_at(run, place)) for run in runs]
+    band = [frame.y(one) for one in scene.settling or (level, level)]
+    choices = [max(*beside, *band) + 15.0, min(*beside, *band) - 15.0, row + 34.0, row - 34.0]
+    fits = [y for y in choices if top + 8.0 < y < bottom - 6.0 and all(abs(y - line) > 10.0 for line in lines)]
+    at = QPointF(right - 4.0, fits[0] if fits else min(max(choices[1], top + 8.0), bottom - 8.0))
+    plate = theme.colour("surface")
+    lettering.write(painter, at, text, theme.colour("ink"), 12, 600, lettering.RIGHT, plate=plate)
+
+
+def paint_cursor_dot(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, focused: bool = False) -> None:
+    """Paint the point of the curve that the time cursor stands at."""
+    if scene.now is None or frame.plot is None:
+        return
+    at = QPointF(frame.time_x(scene.now), frame.row(scene.surface) + 0.5)
+    if focused:
+        painter.setPen(pen(theme.colour("accent"), 2.0))
+        painter.drawEllipse(at, 10.0, 10.0)
+    painter.setPen(pen(theme.colour("surface"), 2.0))
+    painter.setBrush(theme.colour("accent"))
+    painter.drawEllipse(at, 6.0, 6.0)
+    painter.setBrush(Qt.BrushStyle.NoBrush)
+
+
+def cursor_plate(frame: Frame, scene: Scene) -> QRectF:
+    """Return the plate with the cursor's time, over the plot."""
+    if scene.now is None or frame.plot is None:
+        return QRectF()
+    wide = text_width(scene.now_text, 12, 600) + 14.0
+    left = min(max(frame.time_x(scene.now) - 0.5 * wide, frame.plot[0] - 10.0), frame.width - wide - 1.0)
+    return QRectF(round(left), round(frame.top) - 23.0, wide, 19.0)
+
+
+def paint_cursor(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Paint the time cursor through both plots, with its time on a plate."""
+    if scene.now is None or frame.plot is None:
+        return
+    accent = theme.colour("accent")
+    plate = cursor_plate(frame, scene)
+    foot = frame.flow[3] if frame.flow else frame.plot[3]
+    plumb_line(painter, frame.time_x(scene.now), plate.bottom(), foot, pen(accent))
+    painter.setPen(Qt.PenStyle.NoPen)
+    painter.setBrush(accent)
+    painter.drawRoundedRect(plate, 2.0, 2.0)
+    painter.setBrush(Qt.BrushStyle.NoBrush)
+    ink = theme.colour("on_accent")
+    lettering.write(painter, plate.center(), scene.now_text, ink, 12, 600, lettering.CENTRE)
+
+
+def paint_time_marks(painter: QPainter, frame: Frame, theme: Theme) -> None:
+    """Write the time marks under the lowest plot, and their unit."""
+    lowest = frame.flow or frame.plot
+    if lowest is None:
+        return
+    for value in frame.times.marks:
+        at = QPointF(frame.time_x(value * frame.times.unit), lowest[3] + 13.0)
+        text = mark_text(value, frame.times.step)
+        lettering.write(painter, at, text, theme.colour("muted"), 11, align=lettering.CENTRE)
+    at = QPointF(lowest[2], lowest[3] + 27.0)
+    word = f"{frame.times.word} from start"
+    lettering.write(painter, at, word, theme.colour("muted"), 11, align=lettering.RIGHT)

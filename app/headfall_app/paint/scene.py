@@ -1,0 +1,185 @@
+"""What is to be drawn of one case: levels, runs, sizes and ready texts, in SI and without a window system."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from headfall.answers import Answers, Curve
+from headfall.case.model import Box, Case, FlatEnd, Path, UprightCylinder
+from headfall.quantities import DisplayUnits, duration
+from headfall.vessel.profile import Outline
+from headfall_app.paint.scene_dimensions import SizeLine, size_lines
+from headfall_app.paint.scene_levels import LevelMark, level_marks
+from headfall_app.paint.scene_outlets import DrawnOutlet, drawn_outlets
+
+
+@dataclass(frozen=True, slots=True)
+class Arrival:
+    """The end of the run in the curve: a ring at ``typical`` [s], a whisker from ``low`` to ``high``, a text."""
+
+    level: float
+    typical: float
+    low: float | None
+    high: float | None
+    text: str
+    overflows: bool
+    rising: bool
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class Scene:
+    """Everything a painter needs. Lengths [m], times [s], flows [m³/s]."""
+
+    outline: Outline
+    has_axis: bool
+    uniform: tuple[float, float] | None
+    height: float
+    marks: tuple[LevelMark, ...]
+    outlets: tuple[DrawnOutlet, ...]
+    sizes: tuple[SizeLine, ...]
+    inflow: float
+    inflow_text: str
+    curve: Curve
+    curve_low: Curve
+    curve_high: Curve
+    longest: float
+    surface: float
+    surface_low: float
+    surface_high: float
+    now: float | None
+    now_text: str
+    arrival: Arrival | None
+    remark: str
+    settling: tuple[float, float] | None
+    settles_at: float | None
+    not_defended: float | None
+    not_defended_text: str
+    shaded_text: str
+    display: DisplayUnits
+
+    @property
+    def stands(self) -> bool:
+        """Whether the vessel stands on the ground: a jet leaves sideways and none leaves through the floor."""
+        faces = {outlet.facing for outlet in self.outlets}
+        return faces == {"side"}
+
+    @property
+    def drains_down(self) -> bool:
+        """Whether a jet leaves through the floor."""
+        return any(outlet.facing == "down" for outlet in self.outlets)
+
+    @property
+    def farthest_reach(self) -> float:
+        """How far from the wall a jet lands at most during the run [m]."""
+        return max((outlet.farthest for outlet in self.outlets), default=0.0)
+
+
+def level_at(curve: Curve, time: float) -> float:
+    """Return the level [m] of a run at a time [s]; its last level after its end."""
+    return float(np.interp(time, curve.time, curve.level))
+
+
+def scene_of(answers: Answers, display: DisplayUnits, *, now: float | None = None, lit: Path | None = None) -> Scene:
+    """Return what is to be drawn of the answers.
+
+    ``now`` [s] is the time of the cursor, None for a page without one, which shows the vessel at the start; ``lit`` is
+    the entry whose dimension is drawn in accent.
+    """
+    time = 0.0 if now is None else min(max(now, 0.0), float(answers.curve.time[-1]))
+    typical, low, high = (level_at(run, time) for run in (answers.curve, answers.curve_low, answers.curve_high))
+    limit = _not_defended(answers)
+    outline = answers.system.profile.outline
+    settles = answers.equilibrium.level
+    return Scene(
+        outline=outline,
+        has_axis=answers.case.vessel.shape != "box",
+        uniform=_uniform(answers.case, outline),
+        height=answers.system.profile.height,
+        marks=level_marks(answers, display, typical if now is not None else None),
+        outlets=drawn_outlets(answers, display, typical, lit),
+        sizes=size_lines(answers.case, outline, display, lit),
+        inflow=answers.system.inflow,
+        inflow_text=f"{display.text(answers.system.inflow, 'flow')} in" if answers.system.inflow > 0.0 else "",
+        curve=answers.curve,
+        curve_low=answers.curve_low,
+        curve_high=answers.curve_high,
+        longest=max(float(run.time[-1]) for run in (answers.curve, answers.curve_low, answers.curve_high)),
+        surface=typical,
+        surface_low=min(low, high, typical),
+        surface_high=max(low, high, typical),
+        now=None if now is None else time,
+        now_text="" if now is None else duration(time),
+        arrival=_arrival(answers),
+        remark=_remark(answers, display),
+        settling=_settling(answers),
+        settles_at=None if answers.equilibrium.overflows else settles.typical,
+        not_defended=limit,
+        not_defended_text="" if limit is None else f"not defended below {display.text(limit, 'level')}",
+        shaded_text=_shaded(answers),
+        display=display,
+    )
+
+
+def _uniform(case: Case, outline: Outline) -> tuple[float, float] | None:
+    """Return the stretch across that may be left out of a drawing: that of the outline, or between upright walls."""
+    vessel = case.vessel
+    if outline.uniform is not None:
+        return outline.uniform
+    flat = isinstance(vessel, UprightCylinder) and (vessel.floor is None or isinstance(vessel.floor, FlatEnd))
+    if isinstance(vessel, Box) or flat:
+        return float(outline.wall[:, 0].min()), float(outline.wall[:, 0].max())
+    return None
+
+
+def _arrival(answers: Answers) -> Arrival | None:
+    run, system = answers.draw_down, answers.system
+    if run.reaches_stop and run.time.typical is not None:
+        if run.time.typical <= 0.0:
+            return None
+        rising = system.stop > system.start
+        text = duration(run.time.typical)
+        return Arrival(system.stop, run.time.typical, run.time.low, run.time.high, text, False, rising)
+    over = run.time_to_overflow
+    if over.typical is not None and answers.curve.ends == "overflow":
+        text = f"over in {duration(over.typical)}"
+        return Arrival(system.overflow, over.typical, over.low, over.high, text, True, True)
+    return None
+
+
+def _remark(answers: Answers, display: DisplayUnits) -> str:
+    system, settles = answers.system, answers.equilibrium.level.typical
+    if answers.draw_down.reaches_stop:
+        return "starts at the stop level" if abs(system.start - system.stop) < 1e-9 * system.profile.height else ""
+    if answers.curve.ends == "overflow" or settles is None:
+        return ""
+    gap = settles - system.stop
+    side = "above" if gap >= 0.0 else "below"
+    word = "settles" if system.inflow > 0.0 else "rests"
+    if abs(gap) < 5e-4:
+        return f"{word} at the stop level, which it only nears"
+    return f"{word} {display.text(abs(gap), 'level')} {side} the stop level"
+
+
+def _settling(answers: Answers) -> tuple[float, float] | None:
+    level = answers.equilibrium.level
+    if answers.curve.ends != "settled" or level.low is None or level.high is None:
+        return None
+    return min(level.low, level.high), max(level.low, level.high)
+
+
+def _not_defended(answers: Answers) -> float | None:
+    reached = float(np.min(answers.curve.level))
+    for finding in answers.findings:
+        if finding.rule == "C17" and finding.grade.word == "Stop" and finding.limit is not None:
+            return finding.limit if finding.limit > reached else None
+    return None
+
+
+def _shaded(answers: Answers) -> str:
+    ranges = {(used.low, used.high) for used in answers.coefficients}
+    if len(ranges) != 1:
+        return "shaded: the coefficients’ ranges"
+    ((low, high),) = ranges
+    return "" if low == high else f"shaded: coefficient {low:g} to {high:g}"

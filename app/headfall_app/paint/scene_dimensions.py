@@ -1,0 +1,48 @@
+"""The vessel's dimension lines with their texts."""
+
+from __future__ import annotations
+
+import math
+from dataclasses import dataclass
+from typing import Any
+
+from headfall.case.model import Case, Path
+from headfall.quantities import DisplayUnits, Quantity
+from headfall.vessel.profile import Outline
+
+
+@dataclass(frozen=True, slots=True)
+class SizeLine:
+    """One dimension line from ``start`` to ``end``, (across, up) [m]; ``path`` is its entry, None for a derived one."""
+
+    start: tuple[float, float]
+    end: tuple[float, float]
+    text: str
+    path: Path | None
+    lit: bool
+
+    @property
+    def is_vertical(self) -> bool:
+        """Whether it measures a height."""
+        return abs(self.end[1] - self.start[1]) > abs(self.end[0] - self.start[0])
+
+
+def size_lines(case: Case, outline: Outline, display: DisplayUnits, lit: Path | None) -> tuple[SizeLine, ...]:
+    """Return the vessel's dimension lines; a typed size shows its text as it was typed, a derived one its value."""
+    lines = []
+    for dimension in outline.dimensions:
+        path: Path = ("vessel", *dimension.field.split("."))
+        typed = _typed(case, path) if dimension.typed else None
+        if typed is None:
+            length = math.dist(dimension.start, dimension.end)
+            lines.append(SizeLine(dimension.start, dimension.end, display.text(length, "length"), None, False))
+        else:
+            lines.append(SizeLine(dimension.start, dimension.end, typed.text, path, lit == path))
+    return tuple(lines)
+
+
+def _typed(case: Case, path: Path) -> Quantity | None:
+    value: Any = case
+    for part in path:
+        value = value[part] if isinstance(part, int) else getattr(value, part, None)
+    return value if isinstance(value, Quantity) else None

@@ -1,0 +1,52 @@
+"""The levelling staff between drawing and curve."""
+
+from __future__ import annotations
+
+from PySide6.QtCore import QPointF, QRectF
+from PySide6.QtGui import QPainter
+
+from headfall_app.paint import lettering
+from headfall_app.paint.layout import STAFF, TOP_ZONE, Frame
+from headfall_app.paint.scene import Scene
+from headfall_app.paint.theme import Theme
+from headfall_app.paint.ticks import block_step, mark_text, marks, number_step
+
+TITLE_ROW = TOP_ZONE - 35.0
+
+
+def staff_numbers(frame: Frame, scene: Scene) -> list[tuple[float, str]]:
+    """Return the numbers beside the staff as (level [m], text), those struck by a level line left out."""
+    factor = scene.display.factor("level")
+    step = number_step(frame.pixels_per_metre * factor)
+    lines = [frame.row(mark.level) for mark in scene.marks if mark.key != "now"]
+    numbers = [(value * factor, mark_text(value, step)) for value in marks(0.0, frame.vessel_height / factor, step)]
+    return [(level, text) for level, text in numbers if all(abs(frame.row(level) - line) >= 8 for line in lines)]
+
+
+def grid_levels(frame: Frame, scene: Scene) -> list[float]:
+    """Return the levels [m] of the plot's grid: those of the staff's numbers, and the top."""
+    factor = scene.display.factor("level")
+    step = number_step(frame.pixels_per_metre * factor)
+    return [value * factor for value in marks(0.0, frame.vessel_height / factor, step)]
+
+
+def paint_staff(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Paint the staff's blocks and numbers and the name of its unit."""
+    factor = scene.display.factor("level")
+    step = block_step(frame.pixels_per_metre * factor) * factor
+    left, top = frame.staff_left, float(frame.row(frame.vessel_height))
+    wall = theme.colour("wall")
+    painter.fillRect(QRectF(left, top, STAFF, frame.bottom + 1.0 - top), wall)
+    level, dark = 0.0, True
+    while level < frame.vessel_height * (1.0 - 1e-9):
+        above = min(level + step, frame.vessel_height)
+        lower, upper = float(frame.row(level)), float(frame.row(above))
+        if not dark:
+            painter.fillRect(QRectF(left + 1.0, upper + 1.0, STAFF - 2.0, lower - upper - 1.0), theme.colour("surface"))
+        level, dark = level + step, not dark
+    for level, text in staff_numbers(frame, scene):
+        row = min(max(float(frame.row(level)), top), frame.bottom)
+        lettering.write(painter, QPointF(left - 7.0, row), text, theme.colour("muted"), 11, align=lettering.RIGHT)
+    name = f"Level, {scene.display.unit('level')}"
+    at = QPointF(left + STAFF, TITLE_ROW + frame.origin)
+    lettering.write(painter, at, name, theme.colour("muted"), 11, align=lettering.RIGHT)
