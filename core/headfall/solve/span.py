@@ -103,8 +103,8 @@ def running_rule(points: int) -> tuple[Array, Array]:
     """Return (fractions, matrix) that give a running integral at ``points`` places of every piece.
 
     ``fractions`` [-], shape (points,), say where in the piece, the last at its end; ``matrix`` (points, ORDER) holds
-    the weights: values at the nodes times length·matrix give ∫ from the piece's first edge. The integrand is taken as the
-    polynomial in θ through its nodes: good to about 1e-8 inside a piece; the last row is the Gauss rule itself.
+    the weights: values at the nodes times length·matrix give ∫ from the piece's first edge. The integrand counts as
+    the polynomial in θ through its nodes: good to about 1e-8 inside a piece; the last row is the Gauss rule itself.
     """
     ends = np.pi / 2 * np.arange(1, points + 1) / points
     local = 4 / np.pi * ends - 1
