@@ -158,7 +158,6 @@ def _rising(times: Array) -> npt.NDArray[np.intp]:
     Where the surface narrows to nothing the last steps in time are lost in round-off.
     """
     highest = np.concatenate([[-np.inf], np.maximum.accumulate(times)[:-1]])
-    kept = np.flatnonzero(times > highest)
-    if kept[-1] != len(times) - 1:
-        kept[-1] = len(times) - 1
-    return kept
+    kept = (times > highest) & (times < times[-1])
+    kept[-1] = True
+    return np.flatnonzero(kept)

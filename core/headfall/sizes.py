@@ -26,9 +26,9 @@ def size_for_drain_time(runs: Runs, target: float, display: DisplayUnits) -> Siz
     if runs.system.stop >= runs.system.start:
         return _none(outlet.name, "an outlet is sized for a drain time only where the stop level lies below the start")
     largest = _largest_scale(runs)
-    guess, slope = _first_guess(runs, target)
+    guess, blocked, time_constant = _first_guess(runs, target)
     scale = scale_for_time(
-        lambda s: times_at(runs, s, (0, 1, 2)), target, np.minimum(guess, largest), _SMALLEST, largest, slope
+        lambda s: times_at(runs, s, (0, 1, 2)), target, guess, blocked, time_constant, _SMALLEST, largest
     )
     if not np.isfinite(scale).all():
         return _none(outlet.name, _why_none(runs, target, largest, display))
@@ -73,7 +73,7 @@ def times_at(runs: Runs, scales: Array, indices: tuple[int, ...]) -> Array:
     system = runs.system
     rows = [coefficients[list(indices)] for coefficients in runs.coefficients]
     slack = system.tolerance
-    step = 0.02 * (system.start - system.stop)
+    step = 1e-5 * (system.start - system.stop)
     probe = np.array([[system.stop], [system.stop + step]])
     flow = total_flow(system.outlets, probe, rows, scales)
     net = flow[0] - system.inflow
@@ -85,7 +85,11 @@ def times_at(runs: Runs, scales: Array, indices: tuple[int, ...]) -> Array:
     reached = []
     for scale, net_at_stop, pole, onset in zip(scales, net, poles, onsets, strict=True):
         breaks = flow_breakpoints(system.outlets, float(scale))
-        ok = bool(net_at_stop > 0) or (system.inflow <= 0 and _down_to_plane(runs, float(scale), slack))
+        if system.inflow > 0:
+            # Twice the slack, for the pole is only estimated here.
+            ok = bool(net_at_stop > 0 and pole < system.stop - 2 * slack)
+        else:
+            ok = bool(net_at_stop > 0) or _down_to_plane(runs, float(scale), slack)
         near = onset.tolist()
         if system.inflow > 0 and np.isfinite(pole) and pole < system.stop:
             near.append(float(pole))
@@ -121,21 +125,30 @@ def _largest_scale(runs: Runs) -> float:
     return max(room / (0.5 * outlet.height), 1.0)
 
 
-def _first_guess(runs: Runs, target: float) -> tuple[Array, float]:
-    """A scale from the run as it stands, mean outflow going as scale squared; and the slope of ln t on ln scale."""
+def _first_guess(runs: Runs, target: float) -> tuple[Array, Array, Array]:
+    """A first scale, the mean flow going as its square; the square of the scale that just holds the stop level; and the
+    time constant of the level there."""
     system = runs.system
-    guess = np.ones(3)
-    passed = runs.flow_at(0.5 * (system.start + system.stop))
+    first = system.outlets[0]
     released = float(np.diff(system.profile.volume(np.array([system.stop, system.start])))[0])
+    at_stop = first.flow(np.full(3, system.stop), runs.coefficients[0])
+    others = runs.flow_at(system.stop) - at_stop
+    mean = np.maximum(first.flow(np.full(3, 0.5 * (system.start + system.stop)), runs.coefficients[0]), 1e-300)
     for index in range(3):
-        curve = runs.curves[index]
-        if runs.reaches[index] and curve.time[-1] > 0:
-            rate = released / curve.time[-1]
-            guess[index] = np.sqrt((released / target + system.inflow) / (rate + system.inflow))
-        elif passed[index] > 0:
-            guess[index] = 1.1 * np.sqrt((released / target + system.inflow) / passed[index])
-    mean = released / target
-    return guess, -2 * (mean + system.inflow) / mean
+        if runs.reaches[index]:
+            time = float(runs.curves[index].time[-1])
+            mean[index] = max(released / time + system.inflow - float(others[index]), 0.1 * mean[index])
+    short = system.inflow - others
+    blocked = np.where(at_stop > 0, short / np.maximum(at_stop, 1e-300), 0.0)
+    if first.facing == "side":
+        # The flow of a side opening does not go quite with the square: covered, it may pass 4 % more; partly covered,
+        # nothing can be said.
+        blocked = np.where((system.stop > first.upper_edge) & (blocked > 0), 0.95 * blocked, np.minimum(blocked, 0.0))
+    surface = float(system.profile.plan_area(np.array(system.stop)))
+    twice_head = 2 * first.head(system.stop)
+    held = surface > 0 and twice_head > 0
+    time_constant = np.where((short > 0) & held, surface * twice_head / np.maximum(short, 1e-300), np.inf)
+    return np.sqrt(np.maximum(blocked, 0.0) + released / target / mean), blocked, time_constant
 
 
 def _neighbours(runs: Runs, sizes: list[tuple[float, str]], largest: float) -> tuple[Neighbour, ...]:

@@ -148,3 +148,10 @@ def test_with_inflow_the_size_found_is_checked_by_the_same_calculation(name: str
     again = re.search(rf"come to ({FIGURE}) s", line)
     assert again is not None
     assert read_figure(again[1]) == pytest.approx(answers_to(name).system.drain_time, rel=0.01)
+
+
+def test_a_run_that_strips_cannot_carry_is_said_to_be_too_long(monkeypatch: pytest.MonkeyPatch) -> None:
+    monkeypatch.setattr("headfall.sheet.hand_strips.MOST", 1)
+    monkeypatch.setattr("headfall.sheet.hand_strips.FEWEST", 2)
+    lines = method_lines(sheet_of("drum with inflow"))
+    assert lines[-1] == "2212.7 s by the program’s integral; too long to be redone by hand."

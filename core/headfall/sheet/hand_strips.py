@@ -49,12 +49,12 @@ class Strip:
 Rule = Callable[[HandRun, Station, Station, int], Strip | None]
 
 
-def strips(run: HandRun, curve: Curve) -> HandCalculation:
+def strips(run: HandRun, curve: Curve) -> HandCalculation | None:
     """Return the sum Σ ΔV / net over few strips that agrees with the solver's time within 0.2 %.
 
     Two rules are tried: the mean of the net flows at a strip's ends (exact for upright walls without inflow), and
     Simpson's rule for 1/net with the level at half the strip's volume (close to an equilibrium). The shorter one is
-    printed. Raises ValueError where no strip has a net flow.
+    printed. None where so few strips cannot carry it.
     """
     trials: list[tuple[bool, float, HandCalculation]] = []
     for rule, printed in ((_mean_strip, _mean_table), (_simpson_strip, _simpson_table)):
@@ -65,9 +65,7 @@ def strips(run: HandRun, curve: Curve) -> HandCalculation:
             length = len(found) + (2 if rule is _simpson_strip else 0)
             worth = length if off <= WANTED_AGREEMENT else off
             trials.append((off > WANTED_AGREEMENT, worth, printed(run, found)))
-    if not trials:
-        raise ValueError("no strip has a net flow")
-    return min(trials, key=lambda trial: trial[:2])[2]
+    return min(trials, key=lambda trial: trial[:2])[2] if trials else None
 
 
 def _refined(run: HandRun, curve: Curve, rule: Rule) -> list[Strip] | None:

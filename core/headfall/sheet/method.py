@@ -33,14 +33,17 @@ def method_parts(answers: Answers, display: DisplayUnits, cite: Citations) -> tu
     goal = "to the stop level" if run.goal == "stop" else "to the overflow level"
     parts.append(Paragraph(f"Time {goal}, typical coefficient {cite('volume_balance')}", "heavy"))
     calculation = hand_calculation(answers, run)
+    if calculation is None:
+        parts.append(Paragraph(f"{seconds(run.time)} s by the program’s integral; too long to be redone by hand."))
+        return tuple(parts)
     parts += _time(run, calculation, cite)
     parts += _range(answers, run)
     parts += sizing_parts(answers, run, calculation, display)
     return tuple(parts)
 
 
-def hand_calculation(answers: Answers, run: HandRun) -> HandCalculation:
-    """Return the closed form where one holds and agrees, else the sum over strips."""
+def hand_calculation(answers: Answers, run: HandRun) -> HandCalculation | None:
+    """Return the closed form where one holds and agrees, else the sum over strips; None where it takes too many."""
     closed = closed_form(run)
     if closed is not None and abs(closed.seconds - run.time) <= 0.002 * run.time:
         return closed

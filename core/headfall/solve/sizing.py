@@ -9,55 +9,82 @@ import numpy.typing as npt
 
 Array = npt.NDArray[np.float64]
 
-_STEPS = 80
+_STEPS = 100
 _CLOSE = 1e-7
-_NARROW = 1e-9
+_ROUND_OFF = 1e-13
+_FLATTEST = -0.005
+_TOO_SHORT = 1e-6
 
 
 def scale_for_time(
     time_at: Callable[[Array], Array],
     target: float,
     first_guess: Array,
+    blocked: Array,
+    time_constant: Array,
     smallest: float,
     largest: float,
-    first_slope: float = -2.0,
 ) -> Array:
-    """Return for each sample the scale at which the drain time equals ``target`` [s]; NaN where no scale does.
+    """Return for each sample the scale [-] at which the drain time equals ``target`` [s]; NaN where no scale does.
 
     ``time_at`` maps scales of shape (samples,) to times [s]; infinite where the stop is not reached, and falling with
-    the scale. Looks between ``smallest`` and ``largest``. A secant in ln(time) against ln(scale), kept within a
-    bracket and started with ``first_slope``; where nothing flows in and one opening faces down, time goes with the
-    scale to the power −2 and the first step is exact.
+    the scale. Where it leaps from never to less than the target, the scale just above the leap is the answer. Looks
+    between ``smallest`` and ``largest``. ``blocked`` is the square of the scale at which the stop is just not reached
+    any more, nil or negative where it is reached with any; it may be too small a figure, not too large a one.
+    ``time_constant`` [s] is that of the level at such a scale, infinite where nothing flows in.
+
+    The unknown is u = ln(scale² − blocked), and time is measured by y = ln(exp(t/τ) − 1). Far from the blocked scale
+    t falls as exp(−u), near it as −τ·u, so that y falls with u by about 1 throughout; exactly so where nothing flows
+    in and one opening faces down. A secant, kept within a bracket.
     """
-    low = np.full(first_guess.shape, np.log(smallest))
-    high = np.full(first_guess.shape, np.log(largest))
-    trial = np.clip(np.log(first_guess), low, high)
-    slope = np.full(first_guess.shape, first_slope)
+    tiny = 1e-14 * np.maximum(np.square(first_guess), np.abs(blocked))
+    low = np.log(np.maximum(smallest**2 - blocked, tiny))
+    high = np.log(np.maximum(largest**2 - blocked, tiny))
+    wanted = _measure(np.full(first_guess.shape, target), time_constant)
+
+    def scale_of(place: Array) -> Array:
+        return np.sqrt(np.clip(blocked + np.exp(place), smallest**2, largest**2))
+
+    trial = np.clip(np.log(np.maximum(np.square(first_guess) - blocked, tiny)), low, high)
+    slope = np.full(first_guess.shape, -1.0)
     before, excess_before = trial, np.full(first_guess.shape, np.nan)
+    too_slow = too_fast = np.zeros(first_guess.shape, dtype=bool)
     for step in range(_STEPS):
-        times = time_at(np.exp(trial))
+        excess = _measure(time_at(scale_of(trial)), time_constant) - wanted
         with np.errstate(divide="ignore", invalid="ignore"):
-            excess = np.log(times / target)
             secant = (excess - excess_before) / (trial - before)
+        too_slow, too_fast = too_slow | (excess > 0), too_fast | (excess < 0)
         low = np.where(excess > 0, np.maximum(low, trial), low)
         high = np.where(excess < 0, np.minimum(high, trial), high)
-        slope = np.where(np.isfinite(secant) & (secant < -0.2), secant, slope)
+        trusted = np.isfinite(secant) & (secant < _FLATTEST) & (np.abs(trial - before) > _TOO_SHORT)
+        slope = np.where(trusted, secant, slope)
         with np.errstate(invalid="ignore"):
             proposal = trial - excess / slope
         inside = np.isfinite(proposal) & (proposal > low) & (proposal < high)
         close = np.abs(excess) < _CLOSE
-        if step > 0 and np.all(close | (high - low < _NARROW)):
+        narrow = (high - low) * np.exp(trial) < _ROUND_OFF * np.square(scale_of(trial))
+        if step > 0 and np.all(close | narrow):
             break
         before, excess_before = trial, excess
-        trial = np.where(inside, proposal, _safe_step(trial, excess, low, high, step))
-    # One more step of the secant, not evaluated again, squares what is left.
-    return np.asarray(np.where(close, np.exp(np.where(inside, proposal, trial)), np.nan), dtype=float)
+        trial = np.where(close | narrow, trial, np.where(inside, proposal, _safe_step(trial, excess, low, high, step)))
+    # One more step of the secant, not evaluated again, squares what is left. Where time leaps at one scale from never
+    # to less than the target, the scale just above it is the answer.
+    place = np.where(close, np.where(inside, proposal, trial), high)
+    found = close | (narrow & too_slow & too_fast)
+    return np.asarray(np.where(found, scale_of(place), np.nan), dtype=float)
+
+
+def _measure(time: Array, time_constant: Array) -> Array:
+    """Return y = ln(exp(t/τ) − 1), ln t up to a constant where τ is infinite."""
+    with np.errstate(divide="ignore"):
+        part = time / np.where(np.isfinite(time_constant), time_constant, 1.0)
+        return np.where(np.isfinite(time_constant), part + np.log(-np.expm1(-part)), np.log(time))
 
 
 def _safe_step(trial: Array, excess: Array, low: Array, high: Array, step: int) -> Array:
-    """A doubling or halving of the scale at first, then the middle of the bracket."""
+    """A few e-folds at first, then the middle of the bracket."""
     middle = 0.5 * (low + high)
     if step > 2:
         return middle
-    stride = np.where(excess > 0, trial + 0.7, trial - 0.7)
+    stride = np.where(excess > 0, trial + 1.5, trial - 1.5)
     return np.where((stride > low) & (stride < high), stride, middle)
