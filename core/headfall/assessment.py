@@ -113,6 +113,7 @@ def _outlet_checks(case: Case, runs: Runs, index: int, outlet: OrificeOutlet, di
         top=runs.system.profile.height,
         gravity=runs.system.gravity,
         display=display,
+        others_go_on=runs.heel < outlet.lower_edge - runs.system.tolerance,
     ) + check_nominal_size(
         outlet=name,
         entry=entry,

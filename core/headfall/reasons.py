@@ -37,5 +37,5 @@ def reason_no_rest(runs: Runs, display: DisplayUnits) -> str:
     inflow = display.text(system.inflow, "flow")
     over = display.text(float(runs.flow_at(system.overflow)[_TYPICAL]), "flow")
     at = display.text(system.overflow, "level")
-    needed = f"; {display.text(rest, 'level')} would be needed" if np.isfinite(rest) else ""
+    needed = f"; a level of {display.text(rest, 'level')} would be needed" if np.isfinite(rest) else ""
     return f"{inflow} flows in and the outlets pass {over} at overflow, {at}{needed}"

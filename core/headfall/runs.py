@@ -89,6 +89,8 @@ class Runs:
 
     def _end(self, index: int) -> tuple[float, str]:
         system, rest = self.system, float(self.rest[index])
+        if abs(system.start - system.stop) <= system.tolerance:
+            return system.start, "stop"
         if self.reaches[index]:
             return system.stop, "stop"
         if system.inflow <= 0 and system.start <= self.heel + system.tolerance:

@@ -89,7 +89,7 @@ def times_at(runs: Runs, scales: Array, indices: tuple[int, ...]) -> Array:
             # Twice the slack, for the pole is only estimated here.
             ok = bool(net_at_stop > 0 and pole < system.stop - 2 * slack)
         else:
-            ok = bool(net_at_stop > 0) or _down_to_plane(runs, float(scale), slack)
+            ok = _drains_to_stop(runs, float(scale))
         near = onset.tolist()
         if system.inflow > 0 and np.isfinite(pole) and pole < system.stop:
             near.append(float(pole))
@@ -108,13 +108,15 @@ def times_at(runs: Runs, scales: Array, indices: tuple[int, ...]) -> Array:
     return np.where(ok_array & np.isfinite(times) & (times > 0), times, np.inf)
 
 
-def _down_to_plane(runs: Runs, scale: float, slack: float) -> bool:
-    """Whether the stop lies at the plane of a downward opening that nothing lies below."""
+def _drains_to_stop(runs: Runs, scale: float) -> bool:
+    """Whether the level comes down to the stop where nothing flows in: not quite to the edge of a side opening."""
     system = runs.system
+    slack = system.tolerance
     first = system.outlets[0]
     edges = [(first.edges(scale)[0], first.facing), *((o.lower_edge, o.facing) for o in system.outlets[1:])]
     heel = min(edge for edge, _ in edges)
-    return abs(system.stop - heel) <= slack and any(f == "down" and e <= heel + slack for e, f in edges)
+    to_its_plane = any(facing == "down" and edge <= heel + slack for edge, facing in edges)
+    return system.stop >= heel - slack if to_its_plane else system.stop > heel + slack
 
 
 def _largest_scale(runs: Runs) -> float:
@@ -167,11 +169,13 @@ def _neighbours(runs: Runs, sizes: list[tuple[float, str]], largest: float) -> t
 
 def _why_none(runs: Runs, target: float, largest: float, display: DisplayUnits) -> str:
     slowest = times_at(runs, np.full(3, _SMALLEST), (0, 1, 2))
-    if np.isfinite(slowest).any() and slowest.min() <= target:
+    if np.all(slowest <= target):
         return f"the other outlets alone drain it in {duration(float(slowest[_TYPICAL]))}"
+    if np.any(slowest <= target):
+        return "with part of the coefficient range the other outlets alone drain it in time, with the rest they do not"
     fastest = times_at(runs, np.full(3, largest), (0, 1, 2))
     outlet = runs.system.outlets[0]
-    size = display.text(outlet.height * largest, "bore")
-    if np.isfinite(fastest[_LOW]):
-        return f"even {size}, the largest that fits at its height, takes {duration(float(fastest[_LOW]))}"
-    return f"even {size}, the largest that fits at its height, does not reach the stop level over the whole range"
+    size = f"even {display.text(outlet.height * largest, 'bore')}, the largest that fits at its height,"
+    if not np.isfinite(fastest).all():
+        return f"{size} does not reach the stop level over the whole range"
+    return f"{size} takes {duration(float(fastest[_LOW]))}"

@@ -94,18 +94,26 @@ def paint_run(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> No
     painter.drawPolyline(polygon(*loose))
 
 
-def paint_not_defended_text(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
-    """Write down to which level the curve is defended, at the left, where no curve runs."""
+def not_defended_box(frame: Frame, scene: Scene) -> QRectF:
+    """Return where it stands down to which level the curve is defended: at the left, where no curve runs."""
     if scene.not_defended is None or frame.plot is None:
-        return
+        return QRectF()
     left, _, _, bottom = frame.plot
     edge = frame.row(scene.not_defended)
     end = frame.time(left + 14.0 + text_width(scene.not_defended_text, 11))
     runs = (scene.curve_low, scene.curve_high)
     lowest = max(frame.y(level_at(run, time)) for run in runs for time in (0.0, end))
     inside = bottom - edge > 26.0 and lowest > edge - 20.0
-    at = QPointF(left + 9.0, max(edge + 13.0, min(lowest + 14.0, bottom - 10.0)) if inside else edge - 11.0)
-    lettering.write(painter, at, scene.not_defended_text, theme.colour("ink"), 11, plate=theme.colour("surface"))
+    row = max(edge + 13.0, min(lowest + 14.0, bottom - 10.0)) if inside else edge - 11.0
+    return lettering.text_box(QPointF(left + 9.0, row), scene.not_defended_text, 11)
+
+
+def paint_not_defended_text(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Write down to which level the curve is defended."""
+    box = not_defended_box(frame, scene)
+    if not box.isNull():
+        at = QPointF(box.left(), box.center().y())
+        lettering.write(painter, at, scene.not_defended_text, theme.colour("ink"), 11, plate=theme.colour("surface"))
 
 
 def paint_arrival(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
@@ -150,23 +158,40 @@ def _arrival_text(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, r
     lettering.write(painter, QPointF(middle, at), arrival.text, ink, 12, 600, lettering.CENTRE, plate=plate)
 
 
-def paint_remark(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
-    """Write what happens instead of an arrival, clear of curve and level lines."""
+def remark_box(frame: Frame, scene: Scene) -> QRectF:
+    """Return where the remark stands: at the right, clear of curve, level lines and other words."""
     if not scene.remark or frame.plot is None:
-        return
+        return QRectF()
     left, top, right, bottom = frame.plot
     text = lettering.elided(scene.remark, right - left - 8.0, 12, 600)
     level = scene.settles_at if scene.settles_at is not None else scene.surface
-    row = float(frame.row(level))
     lines = [frame.row(mark.level) for mark in scene.marks if mark.key != "now"]
+    ends = [right - 12.0 - text_width(text, 12, 600), right]
     runs = (scene.curve_low, scene.curve_high, scene.curve)
-    place = frame.time(right - 8.0 - text_width(text, 12, 600))
-    beside = [row] + [frame.y(level_at(run, place)) for run in runs]
-    band = [frame.y(one) for one in scene.settling or (level, level)]
-    choices = [max(*beside, *band) + 15.0, min(*beside, *band) - 15.0, row + 34.0, row - 34.0]
-    fits = [y for y in choices if top + 8.0 < y < bottom - 6.0 and all(abs(y - line) > 10.0 for line in lines)]
-    at = QPointF(right - 4.0, fits[0] if fits else min(max(choices[1], top + 8.0), bottom - 8.0))
+    rows = [frame.y(level_at(run, frame.time(end))) for run in runs for end in ends]
+    rows += [frame.y(one) for one in (level, *(scene.settling or ()))]
+    taken = not_defended_box(frame, scene).adjusted(-6.0, -3.0, 6.0, 3.0)
+
+    def box(row: float) -> QRectF:
+        return lettering.text_box(QPointF(right - 4.0, row), text, 12, 600, lettering.RIGHT)
+
+    below = [max(rows) + 15.0 + step for step in range(0, 40, 2)]
+    above = [min(rows) - 15.0 - step for step in range(0, 120, 2)]
+    for row in (*below, *above):
+        clear = all(abs(row - line) > 10.0 for line in lines) and not box(row).intersects(taken)
+        if clear and top + 8.0 < row < bottom - 6.0:
+            return box(row)
+    return box(min(max(above[0], top + 8.0), bottom - 8.0))
+
+
+def paint_remark(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Write what happens instead of an arrival."""
+    box = remark_box(frame, scene)
+    if box.isNull() or frame.plot is None:
+        return
+    text = lettering.elided(scene.remark, frame.plot[2] - frame.plot[0] - 8.0, 12, 600)
     plate = theme.colour("surface")
+    at = QPointF(box.right(), box.center().y())
     lettering.write(painter, at, text, theme.colour("ink"), 12, 600, lettering.RIGHT, plate=plate)
 
 

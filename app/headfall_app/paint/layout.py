@@ -131,9 +131,13 @@ def _stretches(scene: Scene, limit: float, band: float, show: str) -> tuple[tupl
     scale = min(band / scene.height, limit / (whole[1] - whole[0] + reach))
     tall = scale * scene.height
     uniform = scene.uniform
-    may = uniform is not None and tall < CUT_SHARE * band and tall < CUT_HEIGHT
-    if uniform is None or not may or show == "whole":
-        return (whole,), may
+    if uniform is None or tall >= CUT_HEIGHT:
+        return (whole,), False
+    if show == "whole":
+        # The page gives a flat picture less height; that must not take away the way back.
+        return (whole,), True
+    if tall >= CUT_SHARE * band:
+        return (whole,), False
     scale = band / scene.height
     places = [outlet_across(scene.outline, one.station) for one in scene.outlets if one.facing == "down"]
     shown = limit / scale - reach - BREAK_WIDTH / scale

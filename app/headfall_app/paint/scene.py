@@ -72,7 +72,7 @@ class Scene:
 
     @property
     def farthest_reach(self) -> float:
-        """How far from the wall a jet lands at most during the run [m]."""
+        """How far from the wall a jet lands at most, from a full vessel [m]."""
         return max((outlet.farthest for outlet in self.outlets), default=0.0)
 
 

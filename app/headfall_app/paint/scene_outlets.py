@@ -19,7 +19,7 @@ JET_VELOCITY_COEFFICIENT = 0.97
 class DrawnOutlet:
     """One outlet. Lengths [m]; ``station`` is the distance from a drum's low tangent line, None where none was typed.
 
-    ``reach`` is where the jet lands now, ``farthest`` where it lands at most during the run, both from the wall and
+    ``reach`` is where the jet lands now, ``farthest`` where it would land from a full vessel, both from the wall and
     nil for a jet that leaves downwards.
     """
 
@@ -43,7 +43,8 @@ class DrawnOutlet:
 def drawn_outlets(answers: Answers, display: DisplayUnits, level: float, lit: Path | None) -> tuple[DrawnOutlet, ...]:
     """Return the outlets at a level [m]; ``lit`` is the entry that has the cursor."""
     system = answers.system
-    highest = max(system.start, float(np.max(answers.curve.level)))
+    # Reach is kept room for up to the vessel's top: the picture must not shift while a level is dragged.
+    highest = system.profile.height
     drawn = []
     for index, (outlet, typed) in enumerate(zip(system.outlets, answers.case.outlets, strict=True)):
         flow = float(np.sum(outlet.flow(np.array([level]), outlet.coefficient_typical)))

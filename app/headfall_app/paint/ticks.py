@@ -9,6 +9,9 @@ from dataclasses import dataclass
 _BLOCKS = (0.05, 0.1, 0.2, 0.5, 1.0)
 _NUMBERS = (0.1, 0.2, 0.5, 1.0, 2.0, 5.0)
 
+_SHORTEST = 1e-6
+"""Below this a run takes no time that could be drawn [s]."""
+
 _SECOND_STEPS = (1.0, 2.0, 5.0, 10.0, 15.0, 20.0, 30.0, 60.0)
 _MINUTE_STEPS = (0.5, 1.0, 2.0, 5.0, 10.0, 15.0, 20.0, 30.0, 60.0)
 _HOUR_STEPS = (0.5, 1.0, 2.0, 3.0, 4.0, 6.0, 12.0, 24.0)
@@ -72,7 +75,7 @@ class TimeAxis:
 
 def time_axis(longest: float, width: float) -> TimeAxis:
     """Return the axis for a run that takes ``longest`` [s], drawn ``width`` [px] wide."""
-    end = longest * 1.03 if longest > 0.0 else 60.0
+    end = longest * 1.03 if longest > _SHORTEST else 60.0
     steps: tuple[float, ...]
     if end <= 150.0:
         unit, word, steps = 1.0, "seconds", _SECOND_STEPS
@@ -83,7 +86,8 @@ def time_axis(longest: float, width: float) -> TimeAxis:
     else:
         unit, word, steps = 86400.0, "days", _DAY_STEPS
     span = end / unit
-    step = _first(steps, span * 58.0 / max(width, 58.0))
+    least = span * 58.0 / max(width, 58.0)
+    step = _first(steps if least > 0.5 * steps[0] else (), least)
     upper = math.ceil(span / step - 1e-9) * step
     # A last mark just past the run rounds the axis off; one far past it would only leave paper blank.
     if upper * unit <= end * 1.06:

@@ -6,15 +6,16 @@ from PySide6.QtCore import QEvent, QPointF, QRectF, QSize, Qt, Signal
 from PySide6.QtGui import QFocusEvent, QKeyEvent, QMouseEvent, QPainter, QPaintEvent, QResizeEvent
 from PySide6.QtWidgets import QWidget
 
-from headfall.answers import Answers, Curve
+from headfall.answers import Answers
 from headfall.case.model import Path
 from headfall_app.document import Document
 from headfall_app.paint import lettering
 from headfall_app.paint.layout import Frame, arrange
-from headfall_app.paint.scene import Scene, scene_of
+from headfall_app.paint.scene import Scene
 from headfall_app.paint.stage_picture import Attention, paint_stage
 from headfall_app.paint.theme import Theme
 from headfall_app.view.level_drag import LevelDrag, unit_of
+from headfall_app.view.shown_scene import ShownScene
 from headfall_app.view.stage_targets import Target, next_item, stage_items, target_at, value_step
 from headfall_app.view.stage_words import stage_sentence
 from headfall_app.view.time_cursor import TimeCursor
@@ -37,7 +38,7 @@ class Stage(QWidget):
     """The geometry is another: what stands on the stage has to be put in its place."""
 
     released = Signal()
-    """What was dragged is let go."""
+    """What was dragged is let go, or the vessel is shown another way: the page may be laid out anew."""
 
     def __init__(self, document: Document, theme: Theme, parent: QWidget | None = None) -> None:
         super().__init__(parent)
@@ -51,12 +52,7 @@ class Stage(QWidget):
         self._time_before = 0.0
         self._pointed_before: Path | None = None
         self._points = False
-        self._frame_of: tuple[object, ...] = ()
-        self._frame_curve: Curve | None = None
-        self._scene_of: tuple[object, ...] = ()
-        self._scene_answers: Answers | None = None
-        self._scene: Scene | None = None
-        self._frame: Frame | None = None
+        self._shown = ShownScene(document)
         self.setAttribute(Qt.WidgetAttribute.WA_OpaquePaintEvent)
         self.setMouseTracking(True)
         self.setFocusPolicy(Qt.FocusPolicy.StrongFocus)
@@ -91,22 +87,11 @@ class Stage(QWidget):
     @property
     def scene(self) -> Scene | None:
         """What is drawn now, None while there are no answers."""
-        answers = self.answers
-        if answers is None:
-            return None
-        key = (self.time, self._document.pointed, self._document.display)
-        if self._scene is None or answers is not self._scene_answers or key != self._scene_of:
-            self._scene_of, self._scene_answers = key, answers
-            self._scene = scene_of(answers, self._document.display, now=self.time, lit=self._document.pointed)
-        return self._scene
+        return self._shown.scene(self.time)
 
     def frame(self, scene: Scene) -> Frame:
         """Return the geometry of the stage at its present size."""
-        key = (self.width(), self.height(), self._show, scene.display.system, self._document.pointed)
-        if self._frame is None or scene.curve is not self._frame_curve or key != self._frame_of:
-            self._frame_of, self._frame_curve = key, scene.curve
-            self._frame = arrange(self.width(), self.height(), scene, self._show)
-        return self._frame
+        return self._shown.frame(scene, self.width(), self.height(), self._show)
 
     def needed_height(self, width: int, available: int) -> int:
         """Return how much of a height the picture can use at a width."""
@@ -147,7 +132,7 @@ class Stage(QWidget):
         """Show a long vessel whole, or cut again."""
         self._show = "auto" if self._show == "whole" else "whole"
         self.frame_changed.emit()
-        self.updateGeometry()
+        self.released.emit()
         self.update()
 
     @property

@@ -48,7 +48,7 @@ class Drum:
         shell = math.pi * self.diameter**2 / 4 * self.length
         return shell + self.low_head.capacity + self.high_head.capacity
 
-    @property
+    @cached_property
     def breakpoints(self) -> tuple[float, ...]:
         """Levels [m] where plan area is not smooth: bottom, rims of crowns, the axis between cones, top."""
         radius = self.diameter / 2
@@ -60,7 +60,7 @@ class Drum:
                 levels.add(radius)
         return tuple(sorted(levels))
 
-    @property
+    @cached_property
     def outline(self) -> Outline:
         """The section along the axis, across from the low tangent line; a closed line."""
         radius = self.diameter / 2

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 from dataclasses import dataclass
+from functools import cached_property
 
 import numpy as np
 
@@ -41,7 +42,7 @@ class Sphere:
         """Levels [m] where plan area is not smooth: bottom and top."""
         return (0.0, self.diameter)
 
-    @property
+    @cached_property
     def outline(self) -> Outline:
         """The section through the middle, across from the middle; a closed line from the top round by the left."""
         radius = self.diameter / 2

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+from functools import cached_property
 
 import numpy as np
 
@@ -44,7 +45,7 @@ class UprightCylinder:
         joints = {0.0, depth, self.height} | ({depth - rim[0]} if rim else set())
         return tuple(sorted(joints))
 
-    @property
+    @cached_property
     def outline(self) -> Outline:
         """The section through the axis, across from the axis."""
         radius, depth, top = self.diameter / 2, self.floor.depth, self.height
