@@ -66,6 +66,9 @@ class Runs:
     def rest(self) -> Array:
         """Levels at which the outlets pass the inflow [m]; may lie above the vessel's top."""
         system = self.system
+        only = system.outlets[0]
+        if len(system.outlets) == 1 and only.facing == "down":
+            return only.elevation + only.onset(np.array(system.inflow), self.coefficients[0])
         return rest_level(self.flow, system.inflow, self.heel, system.profile.height, 3)
 
     @cached_property

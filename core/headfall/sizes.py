@@ -26,10 +26,7 @@ def size_for_drain_time(runs: Runs, target: float, display: DisplayUnits) -> Siz
     if runs.system.stop >= runs.system.start:
         return _none(outlet.name, "an outlet is sized for a drain time only where the stop level lies below the start")
     largest = _largest_scale(runs)
-    guess, blocked, time_constant = _first_guess(runs, target)
-    scale = scale_for_time(
-        lambda s: times_at(runs, s, (0, 1, 2)), target, guess, blocked, time_constant, _SMALLEST, largest
-    )
+    scale = _scales(runs, target, largest)
     if not np.isfinite(scale).all():
         return _none(outlet.name, _why_none(runs, target, largest, display))
     if outlet.shape != "round":
@@ -51,6 +48,27 @@ def size_for_drain_time(runs: Runs, target: float, display: DisplayUnits) -> Siz
         neighbours=neighbours,
         reason="",
     )
+
+
+def _scales(runs: Runs, target: float, largest: float) -> Array:
+    """The scales for the lowest, typical and highest coefficient; not finite where none meets the target."""
+    outlet = runs.system.outlets[0]
+    found = _first_guess(runs, target)
+    # Through one downward opening coefficient and area count only as their product: one search serves all three.
+    one = len(runs.system.outlets) == 1 and outlet.facing == "down"
+    picked = (_TYPICAL,) if one else (_LOW, _TYPICAL, _HIGH)
+    rows = list(picked)
+    scale = scale_for_time(
+        lambda s: times_at(runs, s, picked),
+        target,
+        first_guess=found[0][rows],
+        present_time=found[1][rows],
+        blocked=found[2][rows],
+        time_constant=found[3][rows],
+        smallest=_SMALLEST,
+        largest=largest,
+    )
+    return scale * np.sqrt(outlet.coefficient_typical / np.array(outlet.coefficients)) if one else scale
 
 
 def _none(outlet: str, reason: str) -> Sizing:
@@ -127,20 +145,18 @@ def _largest_scale(runs: Runs) -> float:
     return max(room / (0.5 * outlet.height), 1.0)
 
 
-def _first_guess(runs: Runs, target: float) -> tuple[Array, Array, Array]:
-    """A first scale, the mean flow going as its square; the square of the scale that just holds the stop level; and the
-    time constant of the level there."""
+def _first_guess(runs: Runs, target: float) -> tuple[Array, Array, Array, Array]:
+    """For the search: a first scale, the mean flow going as its square; the run's present time; the square of the scale
+    that just holds the stop level; and the time constant of the level there."""
     system = runs.system
     first = system.outlets[0]
     released = float(np.diff(system.profile.volume(np.array([system.stop, system.start])))[0])
     at_stop = first.flow(np.full(3, system.stop), runs.coefficients[0])
-    others = runs.flow_at(system.stop) - at_stop
     mean = np.maximum(first.flow(np.full(3, 0.5 * (system.start + system.stop)), runs.coefficients[0]), 1e-300)
-    for index in range(3):
-        if runs.reaches[index]:
-            time = float(runs.curves[index].time[-1])
-            mean[index] = max(released / time + system.inflow - float(others[index]), 0.1 * mean[index])
+    present = np.array([run.time[-1] if run.ends == "stop" else np.inf for run in runs.curves])
+    others = runs.flow_at(system.stop) - at_stop
     short = system.inflow - others
+    mean = np.where(np.isfinite(present), np.maximum(released / present - others + system.inflow, 0.1 * mean), mean)
     blocked = np.where(at_stop > 0, short / np.maximum(at_stop, 1e-300), 0.0)
     if first.facing == "side":
         # The flow of a side opening does not go quite with the square: covered, it may pass 4 % more; partly covered,
@@ -150,7 +166,7 @@ def _first_guess(runs: Runs, target: float) -> tuple[Array, Array, Array]:
     twice_head = 2 * first.head(system.stop)
     held = surface > 0 and twice_head > 0
     time_constant = np.where((short > 0) & held, surface * twice_head / np.maximum(short, 1e-300), np.inf)
-    return np.sqrt(np.maximum(blocked, 0.0) + released / target / mean), blocked, time_constant
+    return np.sqrt(np.maximum(blocked, 0.0) + released / target / mean), present, blocked, time_constant
 
 
 def _neighbours(runs: Runs, sizes: list[tuple[float, str]], largest: float) -> tuple[Neighbour, ...]:

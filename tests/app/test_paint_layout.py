@@ -181,9 +181,9 @@ def test_words_in_the_plot_keep_clear_of_one_another_and_of_the_curve(size: tupl
             "height": "3 m",
             "floor": {"form": "cone", "depth": "0.6 m"},
         },
-        {"start": "3.2 m", "stop": "0.1 m"},
+        {"start": "3.2 m", "stop": "0.02 m"},
         outlets=outlets,
-        inflow={"kind": "steady", "rate": "2 L/s"},
+        inflow={"kind": "steady", "rate": "22 L/s"},
     )
     shown = scene_of(solve(case), display_units("metric"), now=60.0)
     frame = arrange(*size, shown)

@@ -9,7 +9,9 @@ from headfall.solve.sizing import scale_for_time
 
 
 def test_power_law() -> None:
-    scale = scale_for_time(lambda s: 900.0 / s**2, 100.0, np.ones(3), np.zeros(3), np.full(3, np.inf), 1e-4, 1e4)
+    scale = scale_for_time(
+        lambda s: 900.0 / s**2, 100.0, np.ones(3), np.full(3, 900.0), np.zeros(3), np.full(3, np.inf), 1e-4, 1e4
+    )
     assert scale == pytest.approx(np.full(3, 3.0), rel=1e-12)
 
 
@@ -22,14 +24,27 @@ def test_blocked_below_a_smallest_scale(share: float, constant: float) -> None:
         with np.errstate(divide="ignore", invalid="ignore"):
             return np.where(scale > blocked, np.log1p(1 / (scale / blocked - 1)) * 50, np.inf)
 
-    scale = scale_for_time(time_at, 100.0, np.full(3, 0.3), share * blocked**2, np.full(3, constant), 1e-4, 1e4)
+    scale = scale_for_time(
+        time_at, 100.0, np.full(3, 0.3), np.full(3, np.inf), share * blocked**2, np.full(3, constant), 1e-4, 1e4
+    )
     assert time_at(scale) == pytest.approx(np.full(3, 100.0), rel=1e-9)
 
 
 def test_no_scale_does() -> None:
     assert np.isnan(
-        scale_for_time(lambda s: 900.0 / s**2, 100.0, np.ones(3), np.zeros(3), np.full(3, np.inf), 1e-4, 2.0)
+        scale_for_time(
+            lambda s: 900.0 / s**2, 100.0, np.ones(3), np.full(3, 900.0), np.zeros(3), np.full(3, np.inf), 1e-4, 2.0
+        )
     ).all()
     assert np.isnan(
-        scale_for_time(lambda s: 900.0 / (s**2 + 100), 100.0, np.ones(3), np.zeros(3), np.full(3, np.inf), 1e-4, 2.0)
+        scale_for_time(
+            lambda s: 900.0 / (s**2 + 100),
+            100.0,
+            np.ones(3),
+            np.full(3, 900.0),
+            np.zeros(3),
+            np.full(3, np.inf),
+            1e-4,
+            2.0,
+        )
     ).all()

@@ -3,19 +3,26 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
+from dataclasses import fields
 from itertools import pairwise
 
 from PySide6.QtCore import QEvent, Qt
 from PySide6.QtWidgets import QApplication, QScrollArea, QVBoxLayout, QWidget
 
-from headfall.case.model import Path
+from headfall.case.model import Case, Path
+from headfall.quantities import DisplayUnits
 from headfall_app.document import Document
 from headfall_app.entry.field import Field
 from headfall_app.entry.group import GroupBox
 from headfall_app.entry.plan import Group, groups_of
+from headfall_app.entry.typed import value_or_none
 from headfall_app.paint.theme import Theme
+from headfall_app.undo import WrongEntry
 
 WIDTH, NARROW_WIDTH, WIDE_WINDOW = 300, 292, 1400
+
+
+_Seen = tuple[Case, dict[Path, WrongEntry], DisplayUnits]
 
 
 class EntryPanel(QWidget):
@@ -33,6 +40,7 @@ class EntryPanel(QWidget):
         self._column_widget.setObjectName("entry")
         self._column = QVBoxLayout(self._column_widget)
         self._column.setSpacing(0)
+        self._seen: _Seen | None = None
         self._column.addStretch(1)
         self._area = QScrollArea(self)
         self._area.setObjectName("entry")
@@ -105,9 +113,11 @@ class EntryPanel(QWidget):
 
     def _follow(self) -> None:
         groups = groups_of(self._document.case)
+        before, self._seen = self._seen, (self._document.case, self._document.wrong, self._document.display)
         if groups == self._shown:
             for box in self._boxes:
-                box.refresh()
+                if not _alike(box.group.path, before, self._seen):
+                    box.refresh()
             return
         if [group.key for group in groups] != [box.group.key for box in self._boxes]:
             self._arrange(groups)
@@ -159,3 +169,12 @@ class EntryPanel(QWidget):
         QApplication.sendPostedEvents(None, QEvent.Type.LayoutRequest)
         self._column.activate()
         self._column_widget.resize(self._column_widget.width(), self._column.sizeHint().height())
+
+
+def _alike(path: Path, before: _Seen | None, now: _Seen) -> bool:
+    """Whether nothing that a group shows has changed: parts of a case that were not edited are the same objects."""
+    if before is None or before[1] or now[1] or before[2] is not now[2]:
+        return False
+    if not path:
+        return all(getattr(before[0], item.name) is getattr(now[0], item.name) for item in fields(Case))
+    return value_or_none(before[0], path) is value_or_none(now[0], path)

@@ -11,7 +11,7 @@ Array = npt.NDArray[np.float64]
 
 _STEPS = 100
 _CLOSE = 1e-7
-_ROUND_OFF = 1e-13
+_NARROW = 1e-11
 _FLATTEST = -0.005
 _TOO_SHORT = 1e-6
 
@@ -20,6 +20,7 @@ def scale_for_time(
     time_at: Callable[[Array], Array],
     target: float,
     first_guess: Array,
+    present_time: Array,
     blocked: Array,
     time_constant: Array,
     smallest: float,
@@ -31,7 +32,8 @@ def scale_for_time(
     the scale. Where it leaps from never to less than the target, the scale just above the leap is the answer. Looks
     between ``smallest`` and ``largest``. ``blocked`` is the square of the scale at which the stop is just not reached
     any more, nil or negative where it is reached with any; it may be too small a figure, not too large a one.
-    ``time_constant`` [s] is that of the level at such a scale, infinite where nothing flows in.
+    ``time_constant`` [s] is that of the level at such a scale, infinite where nothing flows in. ``present_time`` [s] is
+    the time at a scale of 1, not finite where the stop is not reached.
 
     The unknown is u = ln(scale² − blocked), and time is measured by y = ln(exp(t/τ) − 1). Far from the blocked scale
     t falls as exp(−u), near it as −τ·u, so that y falls with u by about 1 throughout; exactly so where nothing flows
@@ -45,9 +47,10 @@ def scale_for_time(
     def scale_of(place: Array) -> Array:
         return np.sqrt(np.clip(blocked + np.exp(place), smallest**2, largest**2))
 
-    trial = np.clip(np.log(np.maximum(np.square(first_guess) - blocked, tiny)), low, high)
     slope = np.full(first_guess.shape, -1.0)
-    before, excess_before = trial, np.full(first_guess.shape, np.nan)
+    before = np.log(np.maximum(1.0 - blocked, tiny))
+    excess_before = _measure(present_time, time_constant) - wanted
+    trial = np.clip(np.log(np.maximum(np.square(first_guess) - blocked, tiny)), low, high)
     too_slow = too_fast = np.zeros(first_guess.shape, dtype=bool)
     for step in range(_STEPS):
         excess = _measure(time_at(scale_of(trial)), time_constant) - wanted
@@ -62,7 +65,7 @@ def scale_for_time(
             proposal = trial - excess / slope
         inside = np.isfinite(proposal) & (proposal > low) & (proposal < high)
         close = np.abs(excess) < _CLOSE
-        narrow = (high - low) * np.exp(trial) < _ROUND_OFF * np.square(scale_of(trial))
+        narrow = np.exp(high) - np.exp(low) < _NARROW * np.square(scale_of(trial))
         if step > 0 and np.all(close | narrow):
             break
         before, excess_before = trial, excess
