@@ -79,10 +79,6 @@ class Wishes(Protocol):
     def help_in_hand(self) -> None: ...
 
 
-def _name_step(action: QAction, what: str, step: str) -> None:
-    action.setText(f"{what}: {step}" if step else what)
-
-
 class Menus(QMenuBar):
     """The menus Case, Edit, Show and Help; each line calls a method of the window."""
 
@@ -135,15 +131,20 @@ class Menus(QMenuBar):
         undo = add_action(self.edit, "Undo", stack.undo, key.Undo)
         redo = add_action(self.edit, "Redo", stack.redo)
         redo.setShortcuts([QKeySequence("Ctrl+Shift+Z"), QKeySequence("Ctrl+Y")])
-        for action, able, named in (
-            (undo, stack.canUndoChanged, stack.undoTextChanged),
-            (redo, stack.canRedoChanged, stack.redoTextChanged),
-        ):
+        self._undo, self._redo = undo, redo
+        for action, able in ((undo, stack.canUndoChanged), (redo, stack.canRedoChanged)):
             action.setEnabled(False)
             able.connect(action.setEnabled)
-            named.connect(partial(_name_step, action, action.text()))
+        stack.undoTextChanged.connect(self._name_undo)
+        stack.redoTextChanged.connect(self._name_redo)
         self.edit.addSeparator()
         add_action(self.edit, "Add an &outlet", self._window.add_outlet, "Ctrl+Shift+A")
+
+    def _name_undo(self, step: str) -> None:
+        self._undo.setText(f"Undo: {step}" if step else "Undo")
+
+    def _name_redo(self, step: str) -> None:
+        self._redo.setText(f"Redo: {step}" if step else "Redo")
 
     def _fill_show(self) -> None:
         window, menu = self._window, self.view

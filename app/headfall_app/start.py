@@ -2,17 +2,18 @@
 
 from __future__ import annotations
 
+import gc
 import sys
 from pathlib import Path
 from tempfile import TemporaryDirectory
 
-from PySide6.QtCore import QBuffer, QIODevice
+from PySide6.QtCore import QBuffer, QIODevice, QTimer
 from PySide6.QtGui import QPixmap
 from PySide6.QtWidgets import QApplication
 
 from headfall.files import read_case, replace_file
 from headfall_app.icon import icon
-from headfall_app.incidents import catch_incidents, start_log
+from headfall_app.incidents import catch_incidents
 from headfall_app.resources import resource_path
 from headfall_app.settings import Settings, data_folder
 from headfall_app.style import prepare_application
@@ -37,16 +38,17 @@ def make_application() -> QApplication:
 def run_window(file: Path | None) -> int:
     """Show the window on a case file, or on the first example, until it is closed."""
     application = make_application()
-    log = start_log(data_folder())
     settings = Settings()
     window = Window(read_case(resource_path(FIRST_CASE)), settings, version=version())
-    catch_incidents(log, window.message.say)
+    catch_incidents(data_folder() / "headfall.log", window.message.say)
     if settings.geometry.isEmpty():
         # The first start: as large as the screen has room for.
         window.resize(FIRST.boundedTo(window.screen().availableSize()).expandedTo(SMALLEST))
     if file is not None:
         window.open_file(file)
     window.show()
+    # The collector was held back for the start; see the command.
+    QTimer.singleShot(0, gc.enable)
     # Before the interpreter ends: a window that outlives its application ends the process badly.
     status = application.exec()
     sys.excepthook = sys.__excepthook__

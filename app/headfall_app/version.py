@@ -2,15 +2,9 @@
 
 from __future__ import annotations
 
-from importlib.metadata import PackageNotFoundError
-from importlib.metadata import version as installed
+from headfall import __version__
 
 
 def version() -> str:
-    """Return the installed version; the library's own where nothing is installed."""
-    try:
-        return installed("headfall")
-    except PackageNotFoundError:
-        from headfall import __version__
-
-        return __version__
+    """Return the version of the program and its library, which are one."""
+    return __version__

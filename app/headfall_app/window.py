@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from pathlib import Path
+from typing import TYPE_CHECKING
 
 from PySide6.QtCore import QSize, Qt
 from PySide6.QtGui import QCloseEvent, QDragEnterEvent, QDropEvent, QGuiApplication, QResizeEvent, QShowEvent
@@ -18,7 +19,6 @@ from headfall_app.entry.line import EntryLine
 from headfall_app.entry.panel import WIDE_WINDOW, EntryPanel
 from headfall_app.entry.strip import FOLDED_BELOW, EntryStrip
 from headfall_app.head_row import HeadRow
-from headfall_app.help_window import TOUR, HelpWindow
 from headfall_app.menus import Menus
 from headfall_app.message import MessagePanel
 from headfall_app.paint.theme import Theme, theme
@@ -28,6 +28,9 @@ from headfall_app.settings import Settings
 from headfall_app.style import dress
 from headfall_app.view.page import TankPage
 from headfall_app.words import group_title
+
+if TYPE_CHECKING:
+    from headfall_app.help_window import HelpWindow
 
 SMALLEST, FIRST = QSize(1024, 640), QSize(1400, 900)
 CASE_SUFFIX = ".headfall"
@@ -259,13 +262,15 @@ class Window(QWidget):
     def show_help(self, page: str, heading: str = "") -> None:
         """Show a page of the help beside the window."""
         if self.help is None:
+            from headfall_app.help_window import HelpWindow
+
             self.help = HelpWindow(self._version, self)
         self.help.show_page(page, heading)
 
     def help_in_hand(self) -> None:
         """Show the help at the entry that has the cursor."""
         pointed = self.document.pointed
-        self.show_help(TOUR, group_title(pointed[:1]) if pointed else "")
+        self.show_help("tour", group_title(pointed[:1]) if pointed else "")
 
     # Events -----------------------------------------------------------------------------------------------------------
 

@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import errno
-import hashlib
 import os
 import secrets
 from contextlib import suppress
@@ -103,6 +102,8 @@ def fingerprint(case: Case) -> str:
 
     They are the first of the SHA-256 of what was typed, without spaces and with the keys in alphabetical order.
     """
+    import hashlib
+
     digits = hashlib.sha256(canonical_text(case).encode("utf-8")).hexdigest()[:_FINGERPRINT_DIGITS]
     return " ".join(digits[at : at + _FINGERPRINT_GROUP] for at in range(0, len(digits), _FINGERPRINT_GROUP))
 

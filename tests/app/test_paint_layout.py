@@ -175,12 +175,7 @@ def test_words_in_the_plot_keep_clear_of_one_another_and_of_the_curve(size: tupl
         SIDE | {"elevation": "1.2 m", "opening": {"form": "rectangle", "width": "60 mm", "height": "40 mm"}},
     ]
     case = case_of(
-        {
-            "shape": "upright_cylinder",
-            "diameter": "2.4 m",
-            "height": "3 m",
-            "floor": {"form": "cone", "depth": "0.6 m"},
-        },
+        {"shape": "upright_cylinder", "diameter": "2.4 m", "height": "3.6 m"},
         {"start": "3.2 m", "stop": "0.02 m"},
         outlets=outlets,
         inflow={"kind": "steady", "rate": "22 L/s"},

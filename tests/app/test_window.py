@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import logging
 import sys
 from collections.abc import Callable
 from pathlib import Path
@@ -15,7 +14,7 @@ from PySide6.QtWidgets import QApplication, QLineEdit, QMenu, QPushButton, QWidg
 
 from headfall.case.model import Case
 from headfall.files import read_case, write_case
-from headfall_app.incidents import catch_incidents, start_log
+from headfall_app.incidents import catch_incidents
 from headfall_app.questions import LEAVE, SAVE, STAY
 from headfall_app.resources import resource_path
 from headfall_app.settings import Settings
@@ -282,17 +281,12 @@ def test_an_incident_is_said_in_a_sentence_and_logged(
     window: Window, tmp_path: Path, monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str]
 ) -> None:
     monkeypatch.setattr(sys, "excepthook", sys.excepthook)
-    root = logging.getLogger()
-    before = list(root.handlers)
-    log = start_log(tmp_path / "data")
+    log = tmp_path / "data" / "headfall.log"
     catch_incidents(log, window.message.say)
     try:
         raise ZeroDivisionError("a defect")
     except ZeroDivisionError as incident:
         sys.excepthook(type(incident), incident, incident.__traceback__)
-    for handler in [handler for handler in root.handlers if handler not in before]:
-        handler.close()
-        root.removeHandler(handler)
     assert window.message.said.startswith("Something in Headfall itself failed.")
     assert "ZeroDivisionError: a defect" in log.read_text(encoding="utf-8")
     assert "Traceback" not in capsys.readouterr().err

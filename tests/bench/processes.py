@@ -55,7 +55,10 @@ def environment(folder: str) -> dict[str, str]:
     """Return the environment of a child: packages of this checkout, settings in a folder of its own."""
     paths = [str(PROJECT / "core"), str(PROJECT / "app"), os.environ.get("PYTHONPATH", "")]
     own = {"HOME": folder, "XDG_CONFIG_HOME": folder, "XDG_DATA_HOME": folder, "XDG_CACHE_HOME": folder}
-    return {**os.environ, **own, "QT_QPA_PLATFORM": "offscreen", "PYTHONPATH": os.pathsep.join(filter(None, paths))}
+    # As on a machine of a person's: compiled once, at the first start.
+    own["PYTHONPYCACHEPREFIX"] = str(Path(folder) / "compiled")
+    inherited = {name: value for name, value in os.environ.items() if name != "PYTHONDONTWRITEBYTECODE"}
+    return {**inherited, **own, "QT_QPA_PLATFORM": "offscreen", "PYTHONPATH": os.pathsep.join(filter(None, paths))}
 
 
 def first_paint(lines: str, folder: str) -> float:
