@@ -128,23 +128,13 @@ class Menus(QMenuBar):
 
     def _fill_edit(self) -> None:
         stack, key = self._window.document.undo_stack, QKeySequence.StandardKey
-        undo = add_action(self.edit, "Undo", stack.undo, key.Undo)
-        redo = add_action(self.edit, "Redo", stack.redo)
+        # The stack's own actions name the step, and go quietly when the window does.
+        undo, redo = stack.createUndoAction(self.edit), stack.createRedoAction(self.edit)
+        undo.setShortcuts(key.Undo)
         redo.setShortcuts([QKeySequence("Ctrl+Shift+Z"), QKeySequence("Ctrl+Y")])
-        self._undo, self._redo = undo, redo
-        for action, able in ((undo, stack.canUndoChanged), (redo, stack.canRedoChanged)):
-            action.setEnabled(False)
-            able.connect(action.setEnabled)
-        stack.undoTextChanged.connect(self._name_undo)
-        stack.redoTextChanged.connect(self._name_redo)
+        self.edit.addActions([undo, redo])
         self.edit.addSeparator()
         add_action(self.edit, "Add an &outlet", self._window.add_outlet, "Ctrl+Shift+A")
-
-    def _name_undo(self, step: str) -> None:
-        self._undo.setText(f"Undo: {step}" if step else "Undo")
-
-    def _name_redo(self, step: str) -> None:
-        self._redo.setText(f"Redo: {step}" if step else "Redo")
 
     def _fill_show(self) -> None:
         window, menu = self._window, self.view
