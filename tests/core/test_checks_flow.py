@@ -182,12 +182,12 @@ def test_an_undeclared_headspace_is_a_stop_and_the_vent_is_never_checked() -> No
     assert vent.grade is Grade.NOT_CHECKED
 
 
-def test_findings_are_sorted_worst_first_with_the_scope_last_among_the_notes() -> None:
+def test_findings_are_sorted_worst_first_a_spill_before_other_stops_and_the_scope_last_among_the_notes() -> None:
     note = overflowing(inflow=0.003, time_to_overflow=NEVER)[1]
     findings = [*check_scope(), *check_venting(headspace_declared=False), note, standing(), *overflowing()]
     ordered = sorted_findings(findings)
     assert [finding.grade for finding in ordered] == sorted(finding.grade for finding in findings)
-    assert [finding.rule for finding in ordered if finding.grade is Grade.STOP] == ["C1", "C11", "C13"]
+    assert [finding.rule for finding in ordered if finding.grade is Grade.STOP] == ["C13", "C1", "C11"]
     assert [finding.rule for finding in ordered if finding.grade is Grade.NOTE] == ["C13", "C0"]
 
 

@@ -98,7 +98,7 @@ def _words(
     level_text, lowest_text = display.text(level, "level"), display.text(lowest, "level")
     basis = "It rests on the no-swirl dip, such as Lubin and Springer (1967), which is the best case"
     if undefended and runs_dry:
-        text = f"From {level_text} down until {outlet} runs dry air may be drawn into it."
+        text = f"From {level_text} down until {outlet} runs dry, air may be drawn into it."
         advice = f"{basis}: that stretch is not defended. What follows rests on the lower outlets alone."
         return Grade.ATTENTION, text, advice
     if undefended:
