@@ -119,7 +119,7 @@ def _outlet_checks(case: Case, runs: Runs, index: int, outlet: OrificeOutlet, di
         entry=entry,
         diameter=outlet.width if outlet.shape == "round" else None,
         display=display,
-        place=f"outlets[{index}].opening.diameter",
+        place=f"outlets[{index}].opening" + (".diameter" if outlet.shape == "round" else ""),
     )
 
 
