@@ -188,6 +188,8 @@ def _picture(parsed: argparse.Namespace) -> int:
 
 
 def _open_window(parsed: argparse.Namespace) -> int:
+    if parsed.case is not None and not parsed.case.exists():
+        return _refuse(f"{parsed.case}: There is no such file, and no such command. Type headfall --help.")
     from headfall_app.start import run_window
 
     return run_window(parsed.case)

@@ -174,3 +174,8 @@ def test_the_first_paint_loads_neither_scipy_nor_pint_nor_pyqtgraph(tmp_path: Pa
     command = [sys.executable, "-c", code, "picture", DRUM, "-o", target]
     ran = subprocess.run(command, capture_output=True, text=True, encoding="utf-8")
     assert (ran.returncode, ran.stdout.strip()) == (0, "[]")
+
+
+def test_a_name_that_is_neither_file_nor_command_opens_no_window(capsys: pytest.CaptureFixture[str]) -> None:
+    assert main(["nosuch"]) == 2
+    assert capsys.readouterr().err == "nosuch: There is no such file, and no such command. Type headfall --help.\n"
