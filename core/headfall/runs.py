@@ -99,13 +99,17 @@ class Runs:
         if system.inflow <= 0 and system.start <= self.heel + system.tolerance:
             return system.start, "at rest"
         if rest > system.overflow + system.tolerance and system.start < rest:
-            return (system.overflow, "overflow") if system.start < system.overflow else (system.start, "overflow")
-        at_start, at_rest = (float(v) for v in system.profile.volume(np.array([system.start, rest])))
-        left = at_rest + SETTLED_PART * (at_start - at_rest)
-        end = float(system.profile.level(np.array(left)))
+            return max(system.start, system.overflow), "overflow"
+        end = float(self._nearly_settled[index])
         if abs(rest - system.start) <= system.tolerance or end in (system.start, rest):
             return system.start, "at rest"
         return end, "settled"
+
+    @cached_property
+    def _nearly_settled(self) -> Array:
+        """Levels [m] with 0.1 % of the way to the resting level left, by volume."""
+        volumes = self.system.profile.volume(np.concatenate([[self.system.start], self.rest]))
+        return self.system.profile.level(volumes[1:] + SETTLED_PART * (volumes[0] - volumes[1:]))
 
     @cached_property
     def _onsets(self) -> Array:

@@ -2,6 +2,9 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
+from functools import cache
+
 import numpy as np
 import numpy.typing as npt
 
@@ -37,7 +40,7 @@ def size_for_drain_time(runs: Runs, target: float, display: DisplayUnits) -> Siz
     above = next((entry for entry in sizes if entry[0] >= high * (1 - 1e-9)), None)
     smaller = [entry for entry in sizes if entry[0] < typical * (1 - 1e-9)][-1:]
     larger = [entry for entry in sizes if entry[0] >= typical * (1 - 1e-9)][:1]
-    neighbours = _neighbours(runs, smaller + larger, largest)
+    neighbours = _neighbours(runs, [*smaller, *larger], largest)
     return Sizing(
         target="drain_time",
         outlet=outlet.name,
@@ -75,12 +78,13 @@ def _none(outlet: str, reason: str) -> Sizing:
     return Sizing("drain_time", outlet, Figure(None, None, None), None, "", None, (), reason)
 
 
-def listed_sizes() -> list[tuple[float, str]]:
+@cache
+def listed_sizes() -> tuple[tuple[float, str], ...]:
     """Return the listed drill and plate sizes [m] with their names, rising."""
     data = read_resource("opening_sizes.json")
-    return [
+    return tuple(
         (size * 1e-3, group["name"].format(size=f"{size:g}")) for group in data["groups"] for size in group["sizes_mm"]
-    ]
+    )
 
 
 def times_at(runs: Runs, scales: Array, indices: tuple[int, ...]) -> Array:
@@ -169,7 +173,7 @@ def _first_guess(runs: Runs, target: float) -> tuple[Array, Array, Array, Array]
     return np.sqrt(np.maximum(blocked, 0.0) + released / target / mean), present, blocked, time_constant
 
 
-def _neighbours(runs: Runs, sizes: list[tuple[float, str]], largest: float) -> tuple[Neighbour, ...]:
+def _neighbours(runs: Runs, sizes: Sequence[tuple[float, str]], largest: float) -> tuple[Neighbour, ...]:
     width = runs.system.outlets[0].width
     sizes = [entry for entry in sizes if entry[0] <= largest * width * (1 + 1e-9)]
     if not sizes:
