@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, fields
 from functools import lru_cache
 from typing import Any
 
@@ -13,6 +13,7 @@ from headfall.case.faults import CaseError, Fault
 from headfall.liquids import LiquidState, water
 from headfall.outlet.entries import entry_coefficient
 from headfall.outlet.orifice import OrificeOutlet
+from headfall.quantities import DisplayUnits, display_units
 from headfall.vessel import ends
 from headfall.vessel.box import Box
 from headfall.vessel.cone import Cone
@@ -50,9 +51,7 @@ class System:
 
 def build_system(case: model.Case) -> System:
     """Return the case in SI. Raises CaseError with every fault between its entries."""
-    faults = find_faults(
-        {"vessel": case.vessel, "outlets": list(case.outlets), "levels": case.levels, "liquid": case.liquid}
-    )
+    faults = find_faults({item.name: getattr(case, item.name) for item in fields(case)})
     if faults:
         raise CaseError(faults)
     profile = vessel_profile(case.vessel)
@@ -139,11 +138,12 @@ def _outlet(outlet: model.Orifice, gravity: float) -> OrificeOutlet:
 def find_faults(parts: Mapping[str, Any]) -> list[Fault]:
     """Return the faults between the sound parts of a case: levels and openings against the vessel, liquid's range.
 
-    ``parts`` may hold ``vessel``, ``levels``, ``outlets`` (a list, None where an outlet is faulty) and ``liquid``;
-    parts that are missing or None are passed over.
+    ``parts`` may hold ``vessel``, ``levels``, ``outlets`` (None where an outlet is faulty), ``liquid``, and ``units``
+    in which limits are told; parts that are missing or None are passed over.
     """
     faults = _liquid_faults(parts.get("liquid"))
     vessel, levels = parts.get("vessel"), parts.get("levels")
+    display = display_units(parts.get("units") or "metric")
     height = None
     if vessel is not None:
         try:
@@ -151,10 +151,10 @@ def find_faults(parts: Mapping[str, Any]) -> list[Fault]:
         except ValueError as problem:
             faults.append(Fault(("vessel",), str(problem).rstrip("."), "sizes of a shape that closes"))
     if levels is not None:
-        faults += _level_faults(levels, height)
+        faults += _level_faults(levels, height, display)
     for index, outlet in enumerate(parts.get("outlets") or ()):
         if outlet is not None:
-            faults += _outlet_faults(("outlets", index), outlet, vessel, height)
+            faults += _outlet_faults(("outlets", index), outlet, vessel, height, display)
     return faults
 
 
@@ -174,14 +174,14 @@ def _liquid_faults(liquid: model.Liquid | None) -> list[Fault]:
     return []
 
 
-def _level_faults(levels: model.Levels, height: float | None) -> list[Fault]:
+def _level_faults(levels: model.Levels, height: float | None, display: DisplayUnits) -> list[Fault]:
     faults = []
     slack = LEVEL_TOLERANCE * (height or max(levels.start.value if levels.start else 0.0, 0.0))
     typed = [(name, getattr(levels, name)) for name in ("start", "stop", "overflow", "high")]
     for name, level in typed:
         if level is not None and height is not None and level.value > height + slack:
             found = f"{level.text} is above the top of the vessel"
-            faults.append(Fault(("levels", name), found, f"a level from 0 to {height:.4g} m"))
+            faults.append(Fault(("levels", name), found, f"a level from 0 to {display.text(height, 'level')}"))
     if levels.overflow is not None:
         for name in ("start", "stop"):
             level = getattr(levels, name)
@@ -192,21 +192,27 @@ def _level_faults(levels: model.Levels, height: float | None) -> list[Fault]:
 
 
 def _outlet_faults(
-    place: model.Path, outlet: model.Orifice, vessel: model.Vessel | None, height: float | None
+    place: model.Path,
+    outlet: model.Orifice,
+    vessel: model.Vessel | None,
+    height: float | None,
+    display: DisplayUnits,
 ) -> list[Fault]:
     faults = []
     slack = LEVEL_TOLERANCE * (height or 0.0)
     elevation = effective(outlet, "elevation")
     text = outlet.elevation.text if outlet.elevation else "0 m"
     if height is not None and elevation > height + slack:
-        faults.append(Fault((*place, "elevation"), f"{text} is above the top of the vessel", f"0 to {height:.4g} m"))
+        wanted = f"a height from 0 to {display.text(height, 'level')}"
+        faults.append(Fault((*place, "elevation"), f"{text} is above the top of the vessel", wanted))
     elif height is not None and effective(outlet, "facing") == "side":
         opening = outlet.opening
         round_opening = isinstance(opening, model.RoundOpening)
         half = 0.5 * (opening.diameter if round_opening else opening.height).value  # type: ignore[union-attr]
         if elevation - half < -slack or elevation + half > height + slack:
             found = f"A side opening with its centre at {text} reaches outside the vessel"
-            wanted = f"a centre from {half:.4g} to {height - half:.4g} m" if 2 * half <= height else "a smaller opening"
+            lowest, highest = display.number(half, "level"), display.text(height - half, "level")
+            wanted = f"a centre from {lowest} to {highest}" if 2 * half <= height else "a smaller opening"
             faults.append(Fault((*place, "elevation"), found, wanted))
     if outlet.station is not None and vessel is not None:
         if not isinstance(vessel, model.Drum):

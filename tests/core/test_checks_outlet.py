@@ -73,7 +73,7 @@ def test_a_run_below_the_dip_is_not_defended() -> None:
     assert finding.value == 0.0
     below = f"Below {finding.limit:.3f} m"
     assert plain(finding.text) == f"{below} air may be drawn into the outlet; the run's lowest level is 0.000 m."
-    assert "nothing is defended below" in finding.advice
+    assert "do not rely on the run below" in finding.advice
 
 
 def test_a_run_above_the_dip_raises_no_caution_and_a_side_opening_dips_deeper() -> None:

@@ -99,13 +99,13 @@ def _words(
     basis = "It rests on the no-swirl dip, such as Lubin and Springer (1967), which is the best case"
     if undefended and runs_dry:
         text = f"From {level_text} down until {outlet} runs dry, air may be drawn into it."
-        advice = f"{basis}: that stretch is not defended. What follows rests on the lower outlets alone."
+        advice = f"{basis}: do not rely on that stretch. What follows rests on the lower outlets alone."
         return Grade.ATTENTION, text, advice
     if undefended:
         text = f"Below {level_text} air may be drawn into {outlet}; the run's lowest level is {lowest_text}."
         advice = (
-            f"{basis}: nothing is defended below {level_text}, and a swirl draws air from further above. Stop at "
-            f"{level_text}, or count on a longer time; fit a vortex breaker against swirl."
+            f"{basis}: do not rely on the run below {level_text}, and a swirl draws air from further above. "
+            f"Set the stop level at {level_text}, or count on a longer time; fit a vortex breaker against swirl."
         )
         return Grade.STOP, text, advice
     text = (

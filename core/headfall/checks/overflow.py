@@ -80,8 +80,8 @@ def _against_overflow(
         text = f"{flows_in} could overflow, with the lowest coefficients after {after}."
         return Grade.ATTENTION, text, f"{holds} {mend}"
     if largest.typical is not None and inflow > largest.typical:
-        text = f"{flows_in} would overflow if it ran on past its stop: {lip} is below the level at which it settles."
-        return Grade.ATTENTION, text, f"{holds} Shut the inflow at the stop. {mend}"
+        text = f"{flows_in} would overflow if it ran on past its stop level: it settles above {lip}."
+        return Grade.ATTENTION, text, f"{holds} Shut the inflow at the stop level. {mend}"
     if inflow > low and inflow > 0.0:
         text = f"{flows_in} could overflow: the outlets may hold no more than {display.text(low, 'flow')}."
         return Grade.ATTENTION, text, f"{holds} {mend}"

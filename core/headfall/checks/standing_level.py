@@ -69,7 +69,7 @@ def check_standing_level(
 def _reached(run: _Run) -> Finding:
     stop = run.display.text(run.stop, "level")
     if run.start == run.stop:
-        text = f"The run starts at its stop, {stop}; no caution is raised by this check."
+        text = f"The run starts at its stop level, {stop}; no caution is raised by this check."
     else:
         text = f"It reaches {stop} over the whole range of the coefficients; no caution is raised by this check."
     return Finding(
@@ -116,11 +116,11 @@ def _never(run: _Run) -> Finding:
         text = f"{run.goal}: {left} stays below the lowest outlet's edge, {run.display.text(run.heel, 'level')}."
         advice = (
             "Near the lower edge of a side opening the flow dies away and the time grows without bound. Choose a stop "
-            "above it, or take the rest out another way."
+            "level above it, or take the rest out another way."
         )
     elif run.inflow <= 0.0:
         text = f"{run.goal}: nothing flows in."
-        advice = "Enter an inflow, or a stop below the start."
+        advice = "Enter an inflow, or a stop level below the start."
     else:
         still = "" if run.volume is None else f", with {run.display.text(run.volume, 'volume')} still in the vessel"
         still = "" if run.fills else still
@@ -151,7 +151,7 @@ def _remedy(run: _Run) -> str:
             "outlet."
         )
     if needed <= 0.0:
-        return f"At {stop} the outlets pass nothing and {inflow} flows in. Shut the inflow, or choose a higher stop."
+        return f"At {stop} the outlets pass nothing and {inflow} flows in. Shut it, or choose a higher stop level."
     return (
         f"At {stop} the outlets pass {flow} with their lowest coefficients and {inflow} flows in. Bring the inflow "
         f"below {flow}, or make the outlet larger."
