@@ -8,6 +8,7 @@ from textwrap import wrap
 from headfall.answers import Answers, Figure, Sizing
 from headfall.checks.finding import Grade
 from headfall.quantities import DisplayUnits, display_units
+from headfall.resources import read_resource
 
 _LABEL, _VALUE, _LINE = 30, 20, 100
 
@@ -111,7 +112,7 @@ def _one_sizing(sizing: Sizing, display: DisplayUnits) -> Iterator[str]:
 def _coefficients(answers: Answers, display: DisplayUnits) -> Iterator[str]:
     for used in answers.coefficients:
         value = f"{used.low:.3g} · {used.typical:.3g} · {used.high:.3g}"
-        yield _row(f"Coefficient, {used.outlet}", value, f"source {used.source}")
+        yield _row(f"Coefficient, {used.outlet}", value, _source(used.source))
 
 
 def _checks(answers: Answers) -> list[str]:
@@ -126,3 +127,10 @@ def _checks(answers: Answers) -> list[str]:
             said = wrap(f"{grade.word}: {'; '.join(named)}.", _LINE)
             lines += said
     return lines
+
+
+def _source(key: str) -> str:
+    """Return a source in a few words: author and year, or its title, and whether the value was read there."""
+    source = read_resource("sources.json")[key]
+    name = f"{source['author']} {source['year'] or ''}".strip() or source["title"]
+    return f"{name}, {source['status']}"
