@@ -103,12 +103,15 @@ def _end(end: model.End | None, diameter: float) -> ends.End:
     return ends.flat()
 
 
-def _outlet(outlet: model.Orifice, gravity: float) -> OrificeOutlet:
-    opening = outlet.opening
+def _sizes(opening: model.Opening) -> tuple[str, float, float]:
+    """Shape, width and height of an opening [m]; a round one is as wide and high as its diameter."""
     if isinstance(opening, model.RoundOpening):
-        shape, width, height = "round", opening.diameter.value, opening.diameter.value
-    else:
-        shape, width, height = "rectangle", opening.width.value, opening.height.value
+        return "round", opening.diameter.value, opening.diameter.value
+    return "rectangle", opening.width.value, opening.height.value
+
+
+def _outlet(outlet: model.Orifice, gravity: float) -> OrificeOutlet:
+    shape, width, height = _sizes(outlet.opening)
     if isinstance(outlet.coefficient, model.CoefficientRange):
         given = outlet.coefficient
         low, typical, high, source = given.low, given.typical, given.high, "own_coefficient"
@@ -206,9 +209,7 @@ def _outlet_faults(
         wanted = f"a height from 0 to {display.text(height, 'level')}"
         faults.append(Fault((*place, "elevation"), f"{text} is above the top of the vessel", wanted))
     elif height is not None and effective(outlet, "facing") == "side":
-        opening = outlet.opening
-        round_opening = isinstance(opening, model.RoundOpening)
-        half = 0.5 * (opening.diameter if round_opening else opening.height).value  # type: ignore[union-attr]
+        half = 0.5 * _sizes(outlet.opening)[2]
         if elevation - half < -slack or elevation + half > height + slack:
             found = f"A side opening with its centre at {text} reaches outside the vessel"
             lowest, highest = display.number(half, "level"), display.text(height - half, "level")
