@@ -155,3 +155,14 @@ def test_a_run_that_strips_cannot_carry_is_said_to_be_too_long(monkeypatch: pyte
     monkeypatch.setattr("headfall.sheet.hand_strips.FEWEST", 2)
     lines = method_lines(sheet_of("drum with inflow"))
     assert lines[-1] == "2212.7 s by the program’s integral; too long to be redone by hand."
+
+
+def test_the_square_of_the_size_found_follows_from_what_is_printed() -> None:
+    found = 0
+    for name in CASES:
+        text = " ".join(method_lines(sheet_of(name)))
+        for large, small, square in re.findall(r"\(([0-9.]+)/([0-9.]+)\)² = ([0-9.]+)", text):
+            digits = len(square.partition(".")[2])
+            assert float(square) == pytest.approx((float(large) / float(small)) ** 2, abs=0.51 * 10**-digits)
+            found += 1
+    assert found >= 2

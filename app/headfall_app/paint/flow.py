@@ -43,7 +43,7 @@ def paint_flow_grid(painter: QPainter, frame: Frame, scene: Scene, theme: Theme)
     left, top, right, bottom = frame.flow
     highest, scale = _scale(frame, scene)
     factor = scene.display.factor("flow")
-    step = nice_step(26.0 / (scale * factor))
+    step = nice_step(20.0 / (scale * factor))
     grid = pen(theme.colour("grid"))
     for value in frame.times.marks:
         plumb_line(painter, frame.time_x(value * frame.times.unit), top, bottom, grid)

@@ -15,6 +15,8 @@ from headfall.sheet.numbers import figures, read_figure, rounded, seconds, sente
 
 _D0, _T0 = f"d{lowered('0')}", f"t{lowered('0')}"
 _MEAN_COLUMNS = 7
+_DIGITS = 5
+"""Of the sizes: enough that the time redone from print is the time wanted."""
 
 
 def sizing_parts(answers: Answers, run: HandRun, calculation: HandCalculation, display: DisplayUnits) -> list[Part]:
@@ -38,12 +40,12 @@ def _line(run: HandRun, sizing: Sizing, target: float, calculation: HandCalculat
     simple = len(run.outlets) == 1 and outlet.facing == "down"
     name, before = ("d", _D0) if outlet.shape == "round" else ("width", f"width{lowered('0')}")
     present, found = outlet.width, outlet.width * scale
-    result = heavy(f"{figures(found, 4)} m")
+    result = heavy(f"{figures(found, _DIGITS)} m")
     if simple and run.inflow == 0:
         root = math.sqrt(rounded(calculation.seconds, 5) / target)
         return (
-            f"{name} = {before}·√({_T0}/t) = {figures(present, 4)} · √({seconds(calculation.seconds)} / "
-            f"{seconds(target)}) = {figures(present * root, 4)} m; found {result}"
+            f"{name} = {before}·√({_T0}/t) = {figures(present, _DIGITS)} · √({seconds(calculation.seconds)} / "
+            f"{seconds(target)}) = {figures(rounded(present, _DIGITS) * root, _DIGITS)} m; found {result}"
         )
     text = f"{name} = {result}, found by trying sizes until the run takes {seconds(target)} s."
     return f"{text} {_redone(run, calculation, scale)}" if simple else text
@@ -51,13 +53,14 @@ def _line(run: HandRun, sizing: Sizing, target: float, calculation: HandCalculat
 
 def _redone(run: HandRun, calculation: HandCalculation, scale: float) -> str:
     """Return the check of the size found: the same calculation with every outflow times the square of the scale."""
-    factor = rounded(scale**2, 5)
-    squared = f"({figures(run.outlets[0].width * scale, 4)}/{figures(run.outlets[0].width, 4)})² = {figures(factor, 5)}"
+    present, found = rounded(run.outlets[0].width, _DIGITS), rounded(run.outlets[0].width * scale, _DIGITS)
+    factor = rounded((found / present) ** 2, 5)
+    squared = f"({figures(found, _DIGITS)}/{figures(present, _DIGITS)})² = {figures(factor, 5)}"
     if calculation.table is not None:
         again = summed_again(calculation.table, factor, rounded(run.inflow, 5))
         return f"Redo by hand: the strips above with every outflow times {squared} come to {seconds(again)} s."
     outlet = run.outlets[0]
-    larger = replace(outlet, width=outlet.width * scale, height=outlet.height * scale)
+    larger = replace(outlet, width=outlet.width * found / present, height=outlet.height * found / present)
     closed = closed_form(replace(run, outlets=(larger,)))
     if closed is None:
         return ""
