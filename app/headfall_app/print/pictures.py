@@ -18,7 +18,7 @@ from headfall_app.print.text import SMALL, draw_text
 _SCALES = (1, 2, 5, 10, 20, 25, 30, 40, 50, 60, 75, 100, 150, 200, 250, 500, 750, 1000, 2000, 5000)
 _SKETCH_HEIGHTS = tuple(range(54, 126, 3))
 _SMALLEST = 0.55
-CURVE_HEIGHTS = (52, 58, 64, 70, 76, 82)
+CURVE_HEIGHTS = (44, 48, 52, 58, 64, 72)
 _GAP = 1.0 * MILLIMETRE
 
 

@@ -31,7 +31,7 @@ from headfall_app.print.pictures import CURVE_HEIGHTS, curve_strip, flow_strip, 
 from headfall_app.print.searchable import with_plain_spaces
 from headfall_app.print.table import table_strips
 
-_FLOW_SHARE = 0.5
+_FLOW_SHARE = 0.7
 LOOSENESS = (0.0, 0.3, 0.6)
 SMALLER_SKETCH = 0.12
 """What one step down in the sketch's scale counts against a better use of the pages."""
