@@ -91,6 +91,7 @@ QMenu::indicator:checked:selected { background: $on_accent; }
 QWidget#message { background: $surface; border-bottom: 1px solid $hair; }
 QLabel#message_text { color: $ink; }
 QLabel#message_title { color: $limit; }
+QLabel#message_title[mood="calm"] { color: $ink; }
 QTextBrowser { background: $surface; color: $ink; border: 0; selection-background-color: $accent;
     selection-color: $on_accent; }
 QDialog, QMessageBox { background: $panel; }

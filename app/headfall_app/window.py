@@ -170,7 +170,7 @@ class Window(QWidget):
         except FileError as trouble:
             self.message.say(trouble.sentence)
         else:
-            self.message.say(f"The sheet was written to {file}.")
+            self.message.tell(f"The sheet was written to {file}.")
 
     def _suggested(self, suffix: str) -> Path:
         if self.document.file:

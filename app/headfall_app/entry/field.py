@@ -62,11 +62,16 @@ class Field(QWidget):
             self._echo.setText(text)
             self.editor.setAccessibleDescription(" ".join(filter(None, (self.row.tip, text))))
 
-    def hide_echo(self) -> None:
-        """Give the echo's width to the editor."""
-        self._echo.hide()
-        self._grid.removeWidget(self._echo)
-        self._grid.addWidget(self.editor, 0, 1, 1, 2)
+    def hide_echo(self, hidden: bool = True) -> None:
+        """Give the echo's width to the editor, or take it back."""
+        if (self._grid.indexOf(self._echo) < 0) == hidden:
+            return
+        self._echo.setVisible(not hidden)
+        for widget in (self.editor, self._echo):
+            self._grid.removeWidget(widget)
+        self._grid.addWidget(self.editor, 0, 1, 1, 2 if hidden else 1)
+        if not hidden:
+            self._grid.addWidget(self._echo, 0, 2, Qt.AlignmentFlag.AlignVCenter)
 
     def show_reason(self, sentence: str) -> None:
         """Mark the row as wrong and say why under it; an empty sentence takes the mark away."""

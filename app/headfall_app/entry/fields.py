@@ -19,6 +19,10 @@ def _change_of(row: Row) -> str:
     return f"Change the {lowered(row.label)}"
 
 
+_SHORT = 62
+"""What a field beside its echo has room for [px]."""
+
+
 class LineField(Field):
     """A label and a line; what was typed stays in the line until it can be read, with the reason under it."""
 
@@ -41,6 +45,8 @@ class LineField(Field):
             self._shown = text
             if self.line.text() != text:
                 self.line.setText(text)
+                if not self.line.hasFocus():
+                    self.line.setCursorPosition(0)
             self.line.setModified(False)
         self.show_echo()
         self.show_reason(wrong.sentence if wrong else "")
@@ -99,6 +105,14 @@ class LineField(Field):
 
 class QuantityField(LineField):
     """A quantity with its unit; a bare number takes the unit that stood here before."""
+
+    def __init__(self, row: Row, document: Document, parent: QWidget | None = None) -> None:
+        super().__init__(row, document, parent)
+        self.line.textChanged.connect(self._fit)
+
+    def _fit(self, text: str) -> None:
+        """Let a long text have the echo's width too."""
+        self.hide_echo(self.line.fontMetrics().horizontalAdvance(text) > _SHORT)
 
     def text_of(self, value: object) -> str:
         return value.text if isinstance(value, Quantity) else ""

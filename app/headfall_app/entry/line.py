@@ -69,4 +69,6 @@ class EntryLine(QLineEdit):
     def focusOutEvent(self, event: QFocusEvent) -> None:
         super().focusOutEvent(event)
         if event.reason() != Qt.FocusReason.PopupFocusReason:
+            # The number stands at the beginning: it is what must be seen of a text that is too long.
+            self.setCursorPosition(0)
             self.left.emit()
