@@ -6,6 +6,8 @@ from pathlib import Path
 
 from PySide6.QtCore import QByteArray, QSettings, QStandardPaths
 
+from headfall_app.resources import resource_path
+
 THEMES = ("system", "light", "dark")
 PAPERS = ("a4", "letter")
 _RECENT_KEPT = 8
@@ -56,8 +58,9 @@ class Settings:
 
     @property
     def folder(self) -> str:
-        """The folder last opened from or saved to; empty at the first start."""
-        return str(self._store.value("folder", ""))
+        """The folder last opened from or saved to; at the first start the person's documents."""
+        documents = QStandardPaths.writableLocation(QStandardPaths.StandardLocation.DocumentsLocation)
+        return str(self._store.value("folder", "") or documents)
 
     @property
     def recent(self) -> list[Path]:
@@ -71,7 +74,9 @@ class Settings:
         file = file.resolve()
         others = [other for other in self.recent if other != file]
         self._store.setValue("recent", [str(path) for path in [file, *others][:_RECENT_KEPT]])
-        self._store.setValue("folder", str(file.parent))
+        if file.parent != resource_path("examples").resolve():
+            # Nobody means to save among the program's own examples.
+            self._store.setValue("folder", str(file.parent))
 
     def forget_recent(self) -> None:
         """Empty the list of recent cases."""

@@ -51,7 +51,8 @@ QLineEdit, QComboBox {
 }
 QLineEdit:hover, QComboBox:hover { border-color: $ink; }
 QLineEdit[untyped="true"], QComboBox[untyped="true"] { background: $panel; color: $muted; }
-QLineEdit:focus, QComboBox:focus, QLineEdit[lit="true"], QComboBox[lit="true"] {
+QLineEdit[lit="true"], QComboBox[lit="true"] { border-color: $accent; }
+QLineEdit:focus, QComboBox:focus {
     border: 2px solid $accent; padding: 0 4px; background: $field;
 }
 QLineEdit[wrong="true"], QComboBox[wrong="true"] {

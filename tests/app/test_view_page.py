@@ -80,7 +80,7 @@ def test_words_replace_a_figure_that_is_none(open_page: OpenPage) -> None:
     assert never[0].under.startswith("settles at ")
     still = open_page(case_with(levels={"start": "1 m", "stop": "1 m"})).answers_row.answers
     assert still[0].under == "starts at the stop level"
-    assert still[1].name == "Rests at" and still[1].under == "nothing flows in"
+    assert still[1].name == "Settles at" and still[1].under == "nothing flows in"
 
 
 def test_a_rectangle_is_sized_by_a_factor(open_page: OpenPage) -> None:

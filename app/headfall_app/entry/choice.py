@@ -29,6 +29,7 @@ class ChoiceBox(QComboBox):
     """A combo box whose arrow is drawn in the colour of its text and which leaves the wheel to the page."""
 
     entered = Signal()
+    left = Signal()
 
     def __init__(self, parent: QWidget | None = None) -> None:
         super().__init__(parent)
@@ -49,6 +50,11 @@ class ChoiceBox(QComboBox):
     def focusInEvent(self, event: QFocusEvent) -> None:
         super().focusInEvent(event)
         self.entered.emit()
+
+    def focusOutEvent(self, event: QFocusEvent) -> None:
+        super().focusOutEvent(event)
+        if event.reason() != Qt.FocusReason.PopupFocusReason:
+            self.left.emit()
 
     def paintEvent(self, event: QPaintEvent) -> None:
         painter, option = QStylePainter(self), QStyleOptionComboBox()
@@ -79,6 +85,7 @@ class ChoiceField(Field):
         self.hide_echo()
         self.box.activated.connect(self._choose)
         self.box.entered.connect(self.point)
+        self.box.left.connect(self.unpoint)
 
     def _choose(self, index: int) -> None:
         choose(self.document, self.row, str(self.box.itemData(index)))

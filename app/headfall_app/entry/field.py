@@ -56,6 +56,11 @@ class Field(QWidget):
         """Tell the document that this entry has the cursor."""
         self.document.pointed = self.row.path
 
+    def unpoint(self) -> None:
+        """Tell the document that this entry has the cursor no more."""
+        if self.document.pointed == self.row.path:
+            self.document.pointed = None
+
     def set_echo(self, text: str) -> None:
         """Say something beside the editor."""
         if self._echo.text() != text:

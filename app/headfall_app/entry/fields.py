@@ -35,6 +35,7 @@ class LineField(Field):
         self.line.stepped.connect(self.step)
         self.line.entered.connect(self.point)
         self.line.left.connect(document.end_gesture)
+        self.line.left.connect(self.unpoint)
         self._shown = ""
 
     def refresh(self) -> None:

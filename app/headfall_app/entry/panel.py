@@ -56,6 +56,7 @@ class EntryPanel(QWidget):
         document.changed.connect(self._follow)
         document.answers_changed.connect(self._follow_answers)
         document.pointed_changed.connect(self._light)
+        document.replaced.connect(self._go_to_top)
         self._follow()
 
     def set_theme(self, theme: Theme) -> None:
@@ -110,6 +111,9 @@ class EntryPanel(QWidget):
         """Return the group an entry stands in."""
         fits = [box for box in self._boxes if box.group.path and path[: len(box.group.path)] == box.group.path]
         return fits[0] if fits else self._boxes[-1] if len(path) == 1 else None
+
+    def _go_to_top(self) -> None:
+        self._area.verticalScrollBar().setValue(0)
 
     def _follow(self) -> None:
         groups = groups_of(self._document.case)

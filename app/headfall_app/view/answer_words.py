@@ -83,7 +83,7 @@ def _run(answers: Answers, display: DisplayUnits) -> Answer:
     elif system.inflow > 0.0:
         under = f"settles at {display.text(level, 'level')} first"
     else:
-        under = f"rests at {display.text(level, 'level')}"
+        under = f"settles at {display.text(level, 'level')}"
     return Answer(stop, (("never reached", True),), under)
 
 
@@ -97,7 +97,7 @@ def _rest(answers: Answers, display: DisplayUnits) -> Answer:
     figure = _value(rest.level.typical, "level", display)
     if system.inflow > 0.0:
         return Answer("Settles at", figure, _range(rest.level, "level", display) or "the same over the whole range")
-    return Answer("Rests at", figure, "nothing flows in")
+    return Answer("Settles at", figure, "nothing flows in")
 
 
 def _outflow(answers: Answers, display: DisplayUnits) -> Answer:

@@ -69,8 +69,9 @@ class InflowSlider(QWidget):
 
     @property
     def unit(self) -> str:
-        """The unit in which the slider writes: the one typed, else the display's."""
-        return self.typed.unit if self.typed is not None and self.typed.unit else self._document.display.unit("flow")
+        """The unit in which the slider writes: the one typed with a flow in it, else the display's."""
+        typed = self.typed
+        return typed.unit if typed is not None and typed.value > 0.0 else self._document.display.unit("flow")
 
     @property
     def value(self) -> float:
@@ -101,7 +102,7 @@ class InflowSlider(QWidget):
         """What is painted."""
         mark = self.mark
         text = f"{self._document.display.text(mark, 'flow')}: largest that stays below overflow" if mark else ""
-        if mark and self.typed is not None and self.typed.unit:
+        if mark and self.typed is not None and self.typed.value > 0.0:
             text = f"{self._written(mark).text}: largest that stays below overflow"
         if self._wanted is not None:
             shown = self._written(self._wanted).text

@@ -22,9 +22,9 @@ def stale_sentence(document: Document) -> str:
     low = name[:1].lower() + name[1:]
     if document.answers is None:
         return f"No answers yet. Mend {low}, to go on."
-    former = _former(document, path)
+    former = _former(document, path) if path in document.wrong else None
     if former is None:
-        return f"Last good answers, from before {low} was changed. Mend it to go on."
+        return f"Last good answers, from before the last change. Mend {low}, to go on."
     return f"Last good answers, for {low} {former.text}. Mend the {last} to go on."
 
 
