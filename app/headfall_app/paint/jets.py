@@ -137,23 +137,25 @@ def _over(frame: Frame, scene: Scene, index: int, foot: QPointF) -> Iterator[Lab
     left = foot.x() + 15.0
     tall = 0.5 * outlet.height * frame.pixels_per_metre
 
-    def at(row: float) -> Label:
-        gap = text_width(outlet.size_text, 12) + 14.0
-        return (
-            (QPointF(left, row), outlet.size_text, lettering.LEFT),
-            (QPointF(left + gap, row), outlet.flow_text, lettering.LEFT),
-        )
+    gap = text_width(outlet.size_text, 12) + 14.0
+    flows = (outlet.flow_text, outlet.flow_text.removesuffix(" out"))
+
+    def beside(row: float, flow: str) -> Label:
+        at = QPointF(left + gap, row)
+        return (QPointF(left, row), outlet.size_text, lettering.LEFT), (at, flow, lettering.LEFT)
+
+    def stacked(row: float, flow: str) -> Label:
+        upper, lower = QPointF(left, row - _LINE), QPointF(left, row)
+        return (upper, outlet.size_text, lettering.LEFT), (lower, flow, lettering.LEFT)
 
     def clear(row: float) -> bool:
         return all(abs(row - line) > 10.0 for line in rows)
 
-    lifts = [foot.y() - tall - lift for lift in range(14, 90, 2)]
-    yield from (at(row) for row in lifts if clear(row))
-    for row in lifts:
-        if clear(row) and clear(row - _LINE):
-            upper, lower = QPointF(left, row - _LINE), QPointF(left, row)
-            yield (upper, outlet.size_text, lettering.LEFT), (lower, outlet.flow_text, lettering.LEFT)
-    yield at(lifts[0])
+    lifts = [foot.y() - tall - lift for lift in range(14, 120, 2)]
+    for flow in flows:
+        yield from (beside(row, flow) for row in lifts if clear(row))
+        yield from (stacked(row, flow) for row in lifts if clear(row) and clear(row - _LINE))
+    yield stacked(lifts[0], flows[-1])
 
 
 def _label(
