@@ -100,12 +100,16 @@ def _words(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, runs: Ru
     left, top, right, bottom = frame.flow
     plate = theme.colour("surface")
     flows = scene.inflow > 0.0
+    start = left + 9.0
+    cursor = frame.time_x(scene.now) if scene.now is not None else left
+    if start - 4.0 < cursor < start + 26.0:
+        start = cursor + 8.0
     if flows:
-        lettering.write(painter, QPointF(left + 9.0, inward - 9.0), "in", theme.colour("ink"), 11, plate=plate)
-    at = QPointF(left + 9.0, _rows(runs, left, left + 36.0)[1] + 12.0)
+        lettering.write(painter, QPointF(start, inward - 9.0), "in", theme.colour("ink"), 11, plate=plate)
+    at = QPointF(start, _rows(runs, start - 9.0, start + 27.0)[1] + 12.0)
     crowded = flows and (abs(inward - 9.0 - at.y()) < 14.0 or abs(inward - at.y()) < 9.0)
     crowded = crowded or at.y() > bottom - 6.0 or (flows and at.y() > inward > _rows(runs, left, left)[0])
-    for column in np.arange(left + 9.0, right - 30.0, 6.0) if crowded else ():
+    for column in np.arange(start, right - 30.0, 6.0) if crowded else ():
         above = _rows(runs, column - 5.0, column + 24.0)[0] - 11.0
         if above > top + 4.0 and not (flows and abs(above - inward) < 20.0):
             at = QPointF(float(column), above)

@@ -110,9 +110,7 @@ def _advice(grade: Grade, effect: str, tail: bool) -> str:
     if grade is Grade.NO_CAUTION:
         return f"It rests on the plain outflow law, which leaves the surface's own motion out; {effect}."
     if grade is Grade.STOP:
-        return (
-            f"The plain outflow law is not defended for so large an outlet; {effect}. A test or a smaller one decides."
-        )
+        return f"The plain outflow law does not hold for so large an outlet; {effect}. A test or a smaller one decides."
     if tail:
-        return f"The plain outflow law is not defended where the vessel is so narrow; {effect}."
+        return f"The plain outflow law does not hold where the vessel is so narrow; {effect}."
     return f"The plain outflow law leaves the surface's own motion out; {effect}. A test decides where that matters."
