@@ -40,7 +40,15 @@ def heading_block(heading: Heading, page: Page, theme: Theme) -> Strip:
         draw_text(painter, "Sizing sheet", TITLE, page.left, top, theme.colour("ink"))
         draw_text(painter, f"Headfall {heading.version}", SMALL, page.right, top, theme.colour("ink"), 1.0)
         under = top + SMALL.line_height
-        draw_text(painter, f"inputs {heading.fingerprint}", SMALL, page.right, under, theme.colour("muted"), 1.0)
+        draw_text(
+            painter,
+            f"fingerprint of the inputs {heading.fingerprint}",
+            SMALL,
+            page.right,
+            under,
+            theme.colour("muted"),
+            1.0,
+        )
         at = top + title_height
         for row, height in zip(rows, heights, strict=True):
             _draw_row(painter, row, at, height, theme)

@@ -73,7 +73,6 @@ def check_nominal_size(
             advice=advice,
             source=_SOURCE,
             value=diameter,
-            limit=None if found is None else found.inside,
             kind="" if diameter is None else "bore",
             place=place,
         )

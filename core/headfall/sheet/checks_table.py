@@ -31,10 +31,9 @@ def _row(finding: Finding, display: DisplayUnits, cite: Citations) -> tuple[str,
     else:
         text = " ".join(part for part in (finding.text, finding.advice) if part)
     source = f" {cite(finding.source)}" if finding.source else ""
-    subject = f"{finding.rule} {finding.subject}"
     return (
         word,
-        subject,
+        finding.subject,
         _shown(finding.value, finding, display),
         _shown(finding.limit, finding, display),
         text + source,

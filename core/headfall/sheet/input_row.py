@@ -7,6 +7,8 @@ from headfall.sheet.marks import unmarked
 from headfall.sheet.numbers import figures, fixed, metres
 
 TYPED, DEFAULT = "as typed", "default"
+NOTHING = "–"
+"""In the column of what was typed, where nothing was."""
 Row = tuple[str, str, str, str, str]
 
 
@@ -28,8 +30,8 @@ def si_text(quantity: Quantity) -> str:
     return f"{figures(value, 6 if quantity.dimension == 'acceleration' else 4)} {units[quantity.dimension]}"
 
 
-def row(name: str, quantity: Quantity | None, default: tuple[str, str], follows: str = "") -> Row:
-    """Return the row of a quantity, or of its default (as typed, in SI) where none was typed."""
+def row(name: str, quantity: Quantity | None, default: str = "", follows: str = "") -> Row:
+    """Return the row of a quantity, or of its default in SI where none was typed."""
     if quantity is None:
-        return (name, default[0], default[1], DEFAULT, follows)
+        return (name, NOTHING, default, DEFAULT, follows)
     return (name, unmarked(quantity.text), si_text(quantity), TYPED, follows)

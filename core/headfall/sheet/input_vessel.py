@@ -15,7 +15,7 @@ from headfall.case.model import (
     UprightCylinder,
 )
 from headfall.quantities import Quantity
-from headfall.sheet.input_row import DEFAULT, TYPED, Row, row
+from headfall.sheet.input_row import DEFAULT, NOTHING, TYPED, Row, row
 from headfall.sheet.numbers import figures, metres
 
 
@@ -32,7 +32,8 @@ def vessel_rows(answers: Answers) -> list[Row]:
                 name = "Length, tangent to tangent"
             if isinstance(vessel, UprightCylinder) and attribute.name == "height":
                 name = "Straight side"
-            rows.append(row(name, value, (str(attribute.metadata.get("default", "")), "0 m")))
+            if value is not None:
+                rows.append(row(name, value))
     if isinstance(vessel, UprightCylinder):
         rows.append(_end("Floor", vessel.floor, vessel.diameter.value))
     if isinstance(vessel, Drum):
@@ -56,21 +57,25 @@ def _end(name: str, end: End | None, diameter: float) -> Row:
         return (name, f"cone, {end.depth.text} deep", f"{metres(end.depth.value)} m", TYPED, "depth")
     if isinstance(end, EllipsoidalEnd):
         ratio = 2.0 if end.ratio is None else end.ratio
-        basis = DEFAULT if end.ratio is None else TYPED
-        return (name, f"ellipsoidal {ratio:g}:1", f"{metres(diameter / 2 / ratio)} m", basis, "depth of the head")
+        typed = f"ellipsoidal, ratio {ratio:g}{_mark(end.ratio)}"
+        return (name, typed, f"{metres(diameter / 2 / ratio)} m", TYPED, "depth of the head")
     if isinstance(end, TorisphericalEnd):
         return _torispherical(name, end, diameter)
     if isinstance(end, HemisphericalEnd):
         return (name, "hemispherical", f"{metres(diameter / 2)} m", TYPED, "depth of the head")
-    return (name, "flat", "", DEFAULT if end is None else TYPED, "")
+    return (name, NOTHING, "flat", DEFAULT, "") if end is None else (name, "flat", "", TYPED, "")
 
 
 def _torispherical(name: str, end: TorisphericalEnd, diameter: float) -> Row:
     """Depth b = R − √((R − r)² − (D/2 − r)²) with the crown's radius R and the knuckle's r."""
     crown = 1.0 if end.crown_ratio is None else end.crown_ratio
     knuckle = 0.06 if end.knuckle_ratio is None else end.knuckle_ratio
-    basis = DEFAULT if end.crown_ratio is None or end.knuckle_ratio is None else TYPED
     crown_radius, knuckle_radius = crown * diameter, knuckle * diameter
     depth = crown_radius - ((crown_radius - knuckle_radius) ** 2 - (diameter / 2 - knuckle_radius) ** 2) ** 0.5
     follows = f"depth of the head; R {metres(crown_radius)} m, r {metres(knuckle_radius)} m"
-    return (name, f"torispherical, {crown:g} and {knuckle:g}", f"{metres(depth)} m", basis, follows)
+    typed = f"torispherical, {crown:g}{_mark(end.crown_ratio)} and {knuckle:g}{_mark(end.knuckle_ratio)}"
+    return (name, typed, f"{metres(depth)} m", TYPED, follows)
+
+
+def _mark(typed: float | None) -> str:
+    return " (default)" if typed is None else ""

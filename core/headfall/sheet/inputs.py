@@ -10,7 +10,7 @@ from headfall.answers import Answers
 from headfall.case.model import CoefficientRange, Orifice, RoundOpening, Structure
 from headfall.quantities import Quantity
 from headfall.sheet.citations import Citations
-from headfall.sheet.input_row import DEFAULT, TYPED, Row, row
+from headfall.sheet.input_row import DEFAULT, NOTHING, TYPED, Row, row
 from headfall.sheet.input_vessel import vessel_rows
 from headfall.sheet.marks import unmarked
 from headfall.sheet.model import Column, Table
@@ -48,14 +48,14 @@ def entry_words(entry: str | None) -> str:
 
 def _liquid(answers: Answers, cite: Citations) -> list[Row]:
     liquid, state = answers.case.liquid, answers.system.liquid
-    name = "water" if liquid is None or liquid.name is None else unmarked(liquid.name)
-    basis = DEFAULT if liquid is None or liquid.name is None else TYPED
     temperature = None if liquid is None else liquid.temperature
     density, viscosity = figures(state.density), figures(state.viscosity * 1000)
     properties = f"density {density} kg/m³, viscosity {viscosity} mPa·s {cite(state.source)}"
     return [
-        ("Liquid", name, "", basis, properties),
-        row("Temperature", temperature, ("20 °C", "293.15 K")),
+        ("Liquid", NOTHING, "water", DEFAULT, properties)
+        if liquid is None or liquid.name is None
+        else ("Liquid", unmarked(liquid.name), "", TYPED, properties),
+        row("Temperature", temperature, "293.15 K"),
     ]
 
 
@@ -65,20 +65,26 @@ def _outlet(answers: Answers, number: int, cite: Citations) -> list[Row]:
     label = f"Outlet {number + 1}"
     facing = "faces the side" if outlet.facing == "side" else "faces down"
     entry = entry_words(typed.entry)
-    basis = TYPED if typed.entry is not None and typed.facing is not None else DEFAULT
-    rows: list[Row] = [(f"{label}, {unmarked(outlet.name)}", f"{entry} orifice", "", basis, facing)]
+    facing += "" if typed.facing is not None else " (default)"
+    name = f"{label}, {unmarked(outlet.name)}"
+    rows: list[Row] = [(name, f"{entry} orifice", "", TYPED, facing)]
+    if typed.entry is None:
+        rows = [(name, NOTHING, f"{entry} orifice", DEFAULT, facing)]
     rows += _opening(label, typed, outlet.area, outlet.count)
     level_of = "its centre" if outlet.facing == "side" else "its plane"
-    rows.append(row(f"{label}, elevation", typed.elevation, ("0 m", "0 m"), f"height of {level_of}"))
+    rows.append(row(f"{label}, elevation", typed.elevation, "0 m", f"height of {level_of}"))
     further = {"station": typed.station, "plate thickness": typed.thickness, "edge radius": typed.edge_radius}
     for name, quantity in further.items():
         if quantity is not None:
-            rows.append(row(f"{label}, {name}", quantity, ("", "")))
+            rows.append(row(f"{label}, {name}", quantity))
     spread = " / ".join(coefficient(value) for value in (used.low, used.typical, used.high))
     own = isinstance(typed.coefficient, CoefficientRange)
-    basis = DEFAULT if typed.coefficient is None else TYPED
     follows = f"lowest / typical / highest {cite(used.source)}"
-    rows.append((f"{label}, coefficient", "own range" if own else "handbook", spread, basis, follows))
+    given = "own range" if own else "handbook"
+    basis = TYPED
+    if typed.coefficient is None:
+        given, basis, follows = NOTHING, DEFAULT, f"handbook: {follows}"
+    rows.append((f"{label}, coefficient", given, spread, basis, follows))
     return rows
 
 
@@ -87,48 +93,49 @@ def _opening(label: str, typed: Orifice, area: float, count: int) -> list[Row]:
     alike = f"{count} alike openings, " if count > 1 else ""
     follows = f"{alike}area {figures(area, 5)} m²"
     if isinstance(opening, RoundOpening):
-        return [row(f"{label}, diameter", opening.diameter, ("", ""), follows)]
+        return [row(f"{label}, diameter", opening.diameter, follows=follows)]
     return [
-        row(f"{label}, width", opening.width, ("", "")),
-        row(f"{label}, height", opening.height, ("", ""), follows),
+        row(f"{label}, width", opening.width),
+        row(f"{label}, height", opening.height, follows=follows),
     ]
 
 
 def _inflow(answers: Answers) -> list[Row]:
     inflow = answers.case.inflow
-    return [row("Inflow, steady", None if inflow is None else inflow.rate, ("0 L/s", "0 m³/s"))]
+    return [row("Inflow, steady", None if inflow is None else inflow.rate, "0 m³/s")]
 
 
 def _levels(answers: Answers) -> list[Row]:
     levels, system, vessel = answers.case.levels, answers.system, answers.vessel
-    overflow = (f"top, {metres(system.overflow)} m", f"{metres(system.overflow)} m")
+    overflow = f"{metres(system.overflow)} m"
+    top = "" if levels.overflow is not None else "the vessel's top; "
     rows = [
-        row("Start level", levels.start, ("", ""), f"volume {figures(vessel.start_volume)} m³"),
-        row("Stop level", levels.stop, ("", ""), f"volume {figures(vessel.stop_volume)} m³"),
-        row("Overflow level", levels.overflow, overflow, f"volume {figures(vessel.overflow_volume)} m³"),
+        row("Start level", levels.start, follows=f"volume {figures(vessel.start_volume)} m³"),
+        row("Stop level", levels.stop, follows=f"volume {figures(vessel.stop_volume)} m³"),
+        row("Overflow level", levels.overflow, overflow, f"{top}volume {figures(vessel.overflow_volume)} m³"),
     ]
     if levels.high is not None:
         volume = float(answers.system.profile.volume(np.array(levels.high.value)))
-        rows.append(row("High level", levels.high, ("", ""), f"volume {figures(volume)} m³"))
+        rows.append(row("High level", levels.high, follows=f"volume {figures(volume)} m³"))
     return rows
 
 
 def _rest(answers: Answers, cite: Citations) -> list[Row]:
     case, system = answers.case, answers.system
     declared = system.headspace_declared
-    rows: list[Row] = [("Headspace", "not declared", "", DEFAULT, "reckoned as open to the air")]
+    rows: list[Row] = [("Headspace", NOTHING, "", DEFAULT, "not declared: reckoned as open to the air")]
     if declared:
         rows = [("Headspace", "open", "", TYPED, "")]
     if case.target is not None and case.target.drain_time is not None:
-        rows.append(row("Drain time wanted", case.target.drain_time, ("", "")))
+        rows.append(row("Drain time wanted", case.target.drain_time))
     if case.structure is not None:
         rows += _structure(case.structure)
     around = case.surroundings
     gravity = None if around is None else around.gravity
     pressure = None if around is None else around.pressure
     standard = f"standard acceleration {cite('cgpm_1901')}" if gravity is None else ""
-    rows.append(row("Gravity", gravity, ("9.80665 m/s²", "9.80665 m/s²"), standard))
-    rows.append(row("Air pressure", pressure, ("101.325 kPa", "101.325 kPa")))
+    rows.append(row("Gravity", gravity, "9.80665 m/s²", standard))
+    rows.append(row("Air pressure", pressure, "101.325 kPa"))
     return rows
 
 
@@ -138,8 +145,8 @@ def _structure(structure: Structure) -> list[Row]:
         value, default = getattr(structure, attribute.name), attribute.metadata.get("default")
         name = attribute.name.replace("_", " ").capitalize()
         if isinstance(value, Quantity):
-            rows.append(row(name, value, ("", "")))
+            rows.append(row(name, value))
         elif value is not None or default is not None:
             shown = f"{default if value is None else value:g}"
-            rows.append((name, shown, shown, DEFAULT if value is None else TYPED, ""))
+            rows.append((name, NOTHING if value is None else shown, shown, DEFAULT if value is None else TYPED, ""))
     return rows
