@@ -109,7 +109,7 @@ def test_inputs_stand_as_typed_beside_their_si_values_and_defaults_are_marked() 
     assert rows["Gravity"][3] == "default"
     assert rows["Temperature"][1:4] == ("–", "293.15 K", "default")
     assert rows["Inflow, steady"][1] == "10 US gal/min"
-    assert rows["Joint efficiency"][1:4] == ("1", "1", "default")
+    assert rows["Joint efficiency"][1:4] == ("–", "1", "default")
 
 
 def test_an_undeclared_headspace_is_a_default_and_an_assumption_to_confirm() -> None:

@@ -110,7 +110,7 @@ def _read_or_refuse(text: str, name: str) -> None:
         assert quantity.text == text
 
 
-@given(value=st.floats(min_value=-1e12, max_value=1e12), kind=st.sampled_from(display_kinds()))
+@given(value=st.floats(min_value=-1e12, max_value=1e12, allow_subnormal=False), kind=st.sampled_from(display_kinds()))
 def test_what_is_shown_is_what_it_is(value: float, kind: str) -> None:
     for system in ("metric", "us"):
         display = display_units(system)
