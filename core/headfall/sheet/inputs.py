@@ -49,7 +49,7 @@ def entry_words(entry: str | None) -> str:
 def _liquid(answers: Answers, cite: Citations) -> list[Row]:
     liquid, state = answers.case.liquid, answers.system.liquid
     temperature = None if liquid is None else liquid.temperature
-    density, viscosity = figures(state.density), figures(state.viscosity * 1000)
+    density, viscosity = figures(state.density), figures(state.viscosity * 1000, 5)
     properties = f"density {density} kg/m³, viscosity {viscosity} mPa·s {cite(state.source)}"
     return [
         ("Liquid", NOTHING, "water", DEFAULT, properties)
