@@ -116,8 +116,8 @@ class EntryPanel(QWidget):
         self._area.verticalScrollBar().setValue(0)
 
     def _follow(self) -> None:
-        groups = groups_of(self._document.case)
         before, self._seen = self._seen, (self._document.case, self._document.wrong, self._document.display)
+        groups = self._shown if _same_rows(before, self._seen) else groups_of(self._document.case)
         if groups == self._shown:
             for box in self._boxes:
                 if not _alike(box.group.path, before, self._seen):
@@ -173,6 +173,11 @@ class EntryPanel(QWidget):
         QApplication.sendPostedEvents(None, QEvent.Type.LayoutRequest)
         self._column.activate()
         self._column_widget.resize(self._column_widget.width(), self._column.sizeHint().height())
+
+
+def _same_rows(before: _Seen | None, now: _Seen) -> bool:
+    """Whether the rows are certainly the same: they hang on the vessel and the outlets alone."""
+    return before is not None and before[0].vessel is now[0].vessel and before[0].outlets is now[0].outlets
 
 
 def _alike(path: Path, before: _Seen | None, now: _Seen) -> bool:

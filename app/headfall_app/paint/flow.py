@@ -73,9 +73,8 @@ def paint_flows(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> 
     fast_x, fast_y = _points(frame, scene, scene.curve_high)
     shape = polygon(np.concatenate((slow_x, fast_x[::-1])), np.concatenate((slow_y, fast_y[::-1])))
     fill(painter, shape, theme.colour("band"), smooth=theme.is_paper)
-    painter.setPen(pen(theme.colour("band_edge")))
-    painter.drawPolyline(polygon(slow_x, slow_y))
-    painter.drawPolyline(polygon(fast_x, fast_y))
+    for edge_x, edge_y in ((slow_x, slow_y), (fast_x, fast_y)):
+        fill(painter, ribbon(edge_x, edge_y, 1.0), theme.colour("band_edge"))
     x, y = _points(frame, scene, scene.curve)
     fill(painter, ribbon(x, y, 2.0), theme.colour("accent"))
     inward = bottom - scene.inflow * _scale(frame, scene)[1]

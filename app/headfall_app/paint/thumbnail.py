@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import numpy as np
 from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QPainter
 
@@ -38,12 +39,19 @@ def _fit(frame: Frame, scene: Scene) -> tuple[float, float, float]:
     return min(TALL / scene.height, WIDE / (right - left)), left, right
 
 
+def _few_points(wall: np.ndarray, scale: float) -> np.ndarray:
+    """Return the points of the wall that differ by a pixel or so at this small scale, the corners among them."""
+    pixel = np.round(wall * scale / 1.5)
+    moved = np.any(pixel[1:] != pixel[:-1], axis=1)
+    return wall[np.concatenate(([True], moved[:-1] | moved[1:], [True]))]
+
+
 def paint_thumbnail(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, hovered: bool) -> None:
     """Paint the outline: what is shown tinted and solid, what is left out dotted."""
     scale, left, right = _fit(frame, scene)
     origin = frame.across.right - (right - left) * scale
     bottom = TITLE_ROW + 0.5 * scene.height * scale
-    wall = scene.outline.wall
+    wall = _few_points(scene.outline.wall, scale)
     shape = polygon(origin + (wall[:, 0] - left) * scale, bottom - wall[:, 1] * scale)
     colour = theme.colour("accent" if hovered else "edge")
     draw = painter.drawPolygon if scene.outline.closed else painter.drawPolyline
