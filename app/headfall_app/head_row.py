@@ -45,7 +45,9 @@ class HeadRow(QWidget):
 
     def _follow(self) -> None:
         case = self._document.case
-        names = (case.title or "Untitled case", case.tag or "", f"rev {case.revision}" if case.revision else "")
+        file = self._document.file
+        title = case.title or (file.stem if file else "Untitled case")
+        names = (title, case.tag or "", f"rev {case.revision}" if case.revision else "")
         for place, name in zip(self._names, names, strict=True):
             # A title may be long: it must not push the menus out of the row.
             place.setText(place.fontMetrics().elidedText(name, Qt.TextElideMode.ElideRight, 420))
