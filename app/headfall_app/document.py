@@ -15,6 +15,7 @@ from headfall.case.faults import CaseError, Fault
 from headfall.case.model import Case, Path
 from headfall.files import read_case, write_case
 from headfall.quantities import DisplayUnits, display_units
+from headfall.system import build_system
 from headfall_app.undo import Draft, DraftStep, WrongEntry
 from headfall_app.words import name_of
 
@@ -53,8 +54,10 @@ class Document(QObject):
         self._draft = Draft(case)
         self._answers: Answers | None = None
         self._tried: Case | None = None
+        self._checked: Case | None = None
         self._case_faults: tuple[Fault, ...] = ()
         self._pointed: Path | None = None
+        self.cursor: Path | None = None
         self._gesture_count = 0
         self._file: FilePath | None = None
         self.undo_stack = QUndoStack(self)
@@ -82,7 +85,7 @@ class Document(QObject):
 
     @property
     def pointed(self) -> Path | None:
-        """The entry that has the cursor or is pointed at in the drawing."""
+        """The entry to light: the one pointed at in the drawing, else ``cursor``, the one that has the keyboard."""
         return self._pointed
 
     @pointed.setter
@@ -113,9 +116,12 @@ class Document(QObject):
 
     def _work_out(self) -> None:
         case = self.case
-        if self._tried is case or (self._draft.wrong and self._answers is not None):
+        if self._tried is case:
             return
-        self._tried, self._case_faults = case, ()
+        if self._draft.wrong and self._answers is not None:
+            self._check_only(case)
+            return
+        self._tried, self._checked, self._case_faults = case, None, ()
         try:
             self._answers = self._solver(case)
         except CaseError as refusal:
@@ -124,6 +130,16 @@ class Document(QObject):
             # A defect in a solver must leave the window and what was typed intact: it becomes a fault of the case.
             logging.getLogger(__name__).exception("A case could not be worked out")
             self._case_faults = (Fault((), "a case that could not be worked out", "other entries"),)
+
+    def _check_only(self, case: Case) -> None:
+        """Find the faults between entries while one cannot be read: the answers wait, a mended fault does not stay."""
+        if self._checked is case:
+            return
+        self._checked, self._tried, self._case_faults = case, None, ()
+        try:
+            build_system(case)
+        except CaseError as refusal:
+            self._case_faults = tuple(refusal.faults)
 
     # Changing it ------------------------------------------------------------------------------------------------------
 

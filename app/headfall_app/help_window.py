@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
+from math import ceil
 
 from PySide6.QtCore import QPoint, QSize, Qt
 from PySide6.QtGui import QTextBlock, QTextCursor
@@ -67,10 +68,23 @@ class HelpWindow(QDialog):
             QTextCursor(block).setBlockFormat(spacing)
 
     def _scroll_to(self, heading: str) -> None:
+        if not heading:
+            self._browser.verticalScrollBar().setValue(0)
+            return
         found = (block for block in self._blocks() if block.blockFormat().headingLevel() and block.text() == heading)
         block = next(found, self._browser.document().begin())
-        top = self._browser.document().documentLayout().blockBoundingRect(block).top()
+        layout = self._browser.document().documentLayout()
+        top = layout.blockBoundingRect(block).top()
+        # The last groups are shorter than the window: without room below them they could not come to its top.
+        self._lengthen(ceil(top + self._browser.viewport().height() - layout.documentSize().height()))
         self._browser.verticalScrollBar().setValue(round(top))
+
+    def _lengthen(self, by: int) -> None:
+        if by > 0:
+            root = self._browser.document().rootFrame()
+            shape = root.frameFormat()
+            shape.setBottomMargin(shape.bottomMargin() + by)
+            root.setFrameFormat(shape)
 
     @property
     def heading_on_top(self) -> str:

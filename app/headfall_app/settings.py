@@ -18,6 +18,11 @@ def data_folder() -> Path:
     return Path(QStandardPaths.writableLocation(QStandardPaths.StandardLocation.AppDataLocation))
 
 
+def is_own_folder(folder: Path) -> bool:
+    """Whether a folder is one of the program's own, where nobody means to keep a case."""
+    return folder.resolve().is_relative_to(resource_path("app").resolve().parent)
+
+
 class Settings:
     """The settings in one INI file; a value that makes no sense counts as not set."""
 
@@ -58,9 +63,12 @@ class Settings:
 
     @property
     def folder(self) -> str:
-        """The folder last opened from or saved to; at the first start the person's documents."""
+        """The folder last opened from or saved to, while it is there; else the person's documents, or home."""
         documents = QStandardPaths.writableLocation(QStandardPaths.StandardLocation.DocumentsLocation)
-        return str(self._store.value("folder", "") or documents)
+        for name in (str(self._store.value("folder", "") or ""), documents):
+            if name and Path(name).is_dir() and not is_own_folder(Path(name)):
+                return name
+        return str(Path.home())
 
     @property
     def recent(self) -> list[Path]:
@@ -74,8 +82,7 @@ class Settings:
         file = file.resolve()
         others = [other for other in self.recent if other != file]
         self._store.setValue("recent", [str(path) for path in [file, *others][:_RECENT_KEPT]])
-        if file.parent != resource_path("examples").resolve():
-            # Nobody means to save among the program's own examples.
+        if not is_own_folder(file.parent):
             self._store.setValue("folder", str(file.parent))
 
     def forget_recent(self) -> None:

@@ -34,7 +34,8 @@ _ROLES = {
     QPalette.ColorRole.Accent: "accent",
 }
 
-# Paddings give way to the two-pixel border, so that a text does not move when its field gets the cursor.
+# Paddings give way to thicker borders, so that a text does not move when its field gets the cursor. The ring is the
+# cursor's alone: a field that is only pointed at has a mark at its left edge.
 _SHEET = Template("""
 QWidget#entry, QWidget#head { background: $panel; }
 QScrollArea#entry { border: 0; border-right: 1px solid $hair; }
@@ -51,7 +52,7 @@ QLineEdit, QComboBox {
 }
 QLineEdit:hover, QComboBox:hover { border-color: $ink; }
 QLineEdit[untyped="true"], QComboBox[untyped="true"] { background: $panel; color: $muted; }
-QLineEdit[lit="true"], QComboBox[lit="true"] { border-color: $accent; }
+QLineEdit[lit="true"], QComboBox[lit="true"] { border-left: 3px solid $accent; padding: 0 5px 0 3px; }
 QLineEdit:focus, QComboBox:focus {
     border: 2px solid $accent; padding: 0 4px; background: $field;
 }
@@ -92,7 +93,10 @@ QMenu::indicator:checked:selected { background: $on_accent; }
 QWidget#message { background: $surface; border-bottom: 1px solid $hair; }
 QLabel#message_text { color: $ink; }
 QLabel#message_title { color: $limit; }
-QLabel#message_title[mood="calm"] { color: $ink; }
+QLabel#notice {
+    background: $surface; color: $ink; border: 1px solid $edge; border-left: 3px solid $accent; border-radius: 2px;
+    padding: 8px 14px;
+}
 QTextBrowser { background: $surface; color: $ink; border: 0; selection-background-color: $accent;
     selection-color: $on_accent; }
 QDialog, QMessageBox { background: $panel; }

@@ -20,11 +20,11 @@ from headfall_app.entry.panel import WIDE_WINDOW, EntryPanel
 from headfall_app.entry.strip import FOLDED_BELOW, EntryStrip
 from headfall_app.head_row import HeadRow
 from headfall_app.menus import Menus
-from headfall_app.message import MessagePanel
+from headfall_app.message import MessagePanel, Notice
 from headfall_app.paint.theme import Theme, theme
 from headfall_app.questions import LEAVE, SAVE, Questions
 from headfall_app.resources import resource_path
-from headfall_app.settings import Settings
+from headfall_app.settings import Settings, is_own_folder
 from headfall_app.style import dress
 from headfall_app.view.page import TankPage
 from headfall_app.words import group_title
@@ -49,7 +49,7 @@ class Window(QWidget):
         self.entry = EntryPanel(self.document, self._theme, self)
         self.strip = EntryStrip(self.entry, self)
         self.page = TankPage(self.document, self._theme)
-        self.message = MessagePanel(self)
+        self.message, self.notice = MessagePanel(self), Notice(self)
         self.head = HeadRow(self.document, Menus(self, self), self)
         self.help: HelpWindow | None = None
         self._lay_out()
@@ -59,7 +59,7 @@ class Window(QWidget):
         self.restoreGeometry(settings.geometry)
         dress(self, self._theme)
         self.document.changed.connect(self._name_window)
-        self.document.replaced.connect(self.message.hide)
+        self.document.replaced.connect(self._show_from_the_top)
         self.page.entry_requested.connect(self.go_to_entry)
         QGuiApplication.styleHints().colorSchemeChanged.connect(self._dress)
         self._name_window()
@@ -76,6 +76,11 @@ class Window(QWidget):
         column.addWidget(self.head)
         column.addWidget(self.message)
         column.addLayout(row, 1)
+
+    def _show_from_the_top(self) -> None:
+        self.message.hide()
+        # The cursor would stay in a field that may be far down, or gone.
+        self.page.setFocus(Qt.FocusReason.OtherFocusReason)
 
     def _name_window(self) -> None:
         file = self.document.file
@@ -124,8 +129,9 @@ class Window(QWidget):
         self.message.say(f"{file.name} was not opened. The case in hand is unchanged.", lines)
 
     def save(self) -> bool:
-        """Save to the case's file, asking for one where it has none; returns whether it was saved."""
-        return self._save_to(self.document.file) if self.document.file else self.save_as()
+        """Save to the case's file, asking for one where it has none or is an example; returns whether it was saved."""
+        file = self.document.file
+        return self.save_as() if file is None or is_own_folder(file.parent) else self._save_to(file)
 
     def save_as(self) -> bool:
         """Ask where to save, and save; returns whether it was saved."""
@@ -170,12 +176,14 @@ class Window(QWidget):
         except FileError as trouble:
             self.message.say(trouble.sentence)
         else:
-            self.message.tell(f"The sheet was written to {file}.")
+            self.message.hide()
+            self.notice.tell(f"The sheet was written to {file}.")
 
     def _suggested(self, suffix: str) -> Path:
-        if self.document.file:
-            return self.document.file.with_suffix(suffix)
-        name = self.document.case.title or "untitled"
+        file = self.document.file
+        if file and not is_own_folder(file.parent):
+            return file.with_suffix(suffix)
+        name = self.document.case.title or (file.stem if file else "untitled")
         plain = "".join(letter if letter.isalnum() else "_" for letter in name.lower()).strip("_")
         return Path(self.settings.folder) / ((plain or "untitled") + suffix)
 
@@ -189,7 +197,9 @@ class Window(QWidget):
         self._take_in()
         if not self.document.has_unsaved_work:
             return True
-        answer = self._questions.unsaved(self, self.document.case.title or "This case")
+        file = self.document.file
+        name = self.document.case.title or (file.stem if file else "This case")
+        answer = self._questions.unsaved(self, name)
         return answer == LEAVE or (answer == SAVE and self.save())
 
     # Showing ----------------------------------------------------------------------------------------------------------
@@ -269,8 +279,8 @@ class Window(QWidget):
 
     def help_in_hand(self) -> None:
         """Show the help at the entry that has the cursor."""
-        pointed = self.document.pointed
-        self.show_help("tour", group_title(pointed[:1]) if pointed else "")
+        entry = self.document.cursor or self.document.pointed
+        self.show_help("tour", group_title(entry[:1]) if entry else "")
 
     # Events -----------------------------------------------------------------------------------------------------------
 
@@ -278,6 +288,7 @@ class Window(QWidget):
         super().resizeEvent(event)
         self.entry.set_narrow(self.width() < WIDE_WINDOW)
         self.strip.set_folds(self.width() < FOLDED_BELOW)
+        self.notice.place()
 
     def showEvent(self, event: QShowEvent) -> None:
         super().showEvent(event)

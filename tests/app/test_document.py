@@ -216,3 +216,17 @@ def test_display_units_are_part_of_the_case_and_undo(document: Document) -> None
     assert document.display.system == "us"
     document.undo_stack.undo()
     assert document.display.system == "metric"
+
+
+def test_a_mended_fault_between_entries_goes_while_another_entry_cannot_be_read(document: Document) -> None:
+    start, diameter = ("levels", "start"), ("outlets", 0, "opening", "diameter")
+    high, good = parse("9 m", "length"), document.case.levels.start
+    document.set(start, high, "Raise the start")
+    document.set_wrong(diameter, "80 L", "80 L is a volume.", "Type it")
+    assert {fault.path for fault in document.faults} == {start, diameter}
+    document.set(start, good, "Lower the start")
+    assert {fault.path for fault in document.faults} == {diameter}
+    document.undo_stack.undo()
+    assert {fault.path for fault in document.faults} == {start, diameter}
+    document.undo_stack.undo()
+    assert {fault.path for fault in document.faults} == {start}

@@ -10,6 +10,7 @@ import numpy as np
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
+from PySide6.QtCore import QRectF
 from PySide6.QtGui import QImage, QPainter
 from PySide6.QtWidgets import QApplication
 
@@ -17,14 +18,16 @@ from headfall.case.model import Case
 from headfall.files import case_from_text
 from headfall.quantities import display_units
 from headfall.study import solve
+from headfall_app.paint import jets, lettering
 from headfall_app.paint.curve import curve_points, not_defended_box, remark_box
 from headfall_app.paint.cut import Across, shown_stretches
 from headfall_app.paint.flags import GAP, TALL, placed_flags, spread
+from headfall_app.paint.flow import word_boxes
 from headfall_app.paint.jets import jet_places, paint_jets
 from headfall_app.paint.layout import arrange
 from headfall_app.paint.scene import Scene, scene_of
 from headfall_app.paint.section import wall_shape
-from headfall_app.paint.staff import staff_numbers
+from headfall_app.paint.staff import numbers_left, staff_numbers
 from headfall_app.paint.theme import theme
 from headfall_app.paint.ticks import block_step, mark_text, marks, nice_step, number_step, time_axis
 
@@ -187,6 +190,8 @@ def test_words_in_the_plot_keep_clear_of_one_another_and_of_the_curve(size: tupl
     assert not remark.intersects(words)
     for x, y in zip(*curve_points(frame, shown.curve), strict=True):
         assert not remark.contains(x, y)
+        assert not words.contains(x, y)
+    assert shown.not_defended_text.startswith("not to be relied on below ")
 
 
 def test_several_outlets_at_one_place_stand_beside_one_another(application: QApplication) -> None:
@@ -209,6 +214,66 @@ def test_several_outlets_at_one_place_stand_beside_one_another(application: QApp
     boxes = [box for _, box in paint_jets(painter, frame, shown, theme("light"))]
     painter.end()
     assert not any(a.intersects(b) for i, a in enumerate(boxes) for b in boxes[i + 1 :])
+
+
+def side_tank(diameter: str, elevation: str, units: str = "us") -> Scene:
+    """Return an upright tank with a hole in its side."""
+    outlet = SIDE | {"elevation": elevation, "opening": {"form": "round", "diameter": "3 in"}}
+    vessel = {"shape": "upright_cylinder", "diameter": diameter, "height": "12 ft"}
+    case = case_of(vessel, {"start": "11 ft", "stop": "1 ft"}, outlets=[outlet], units=units)
+    return scene_of(solve(case), display_units(units), now=60.0)
+
+
+@pytest.mark.parametrize("size", [(944, 430), (928, 420), (700, 300), (1056, 602)])
+@pytest.mark.parametrize("elevation", ["1.5 in", "2 in", "6 in", "3 ft", "9 ft", "11 ft"])
+@pytest.mark.parametrize("diameter", ["2 ft", "10 ft", "60 ft"])
+def test_the_words_of_a_side_outlet_stay_left_of_the_staffs_numbers(
+    application: QApplication, monkeypatch: pytest.MonkeyPatch, size: tuple[int, int], elevation: str, diameter: str
+) -> None:
+    shown = side_tank(diameter, elevation)
+    frame = arrange(*size, shown)
+    written = []
+
+    def write(*arguments: Any, **options: Any) -> QRectF:
+        _, at, text, _, *more = arguments
+        align = options.get("align", more[2] if len(more) > 2 else lettering.LEFT)
+        written.append((text, lettering.text_box(at, text, 12, 400, align)))
+        return written[-1][1]
+
+    monkeypatch.setattr(jets.lettering, "write", write)
+    image = QImage(*size, QImage.Format.Format_RGB32)
+    painter = QPainter(image)
+    paint_jets(painter, frame, shown, theme("light"))
+    painter.end()
+    assert "Ø 3 in" in [text for text, _ in written]
+    assert all(box.right() < numbers_left(frame, shown) for _, box in written)
+    assert all(box.right() < frame.staff_left for _, box in written)
+
+
+@pytest.mark.parametrize("name", ["tank", "drum", "cone"])
+@pytest.mark.parametrize("share", [0.0, 0.01, 0.03, 0.06, 0.5, 0.97, 1.0])
+def test_the_time_cursor_does_not_strike_the_words_of_the_flow_plot(name: str, share: float) -> None:
+    answers = solve(CASES[name])
+    shown = scene_of(answers, display_units("metric"), now=share * float(answers.curve.time[-1]))
+    frame = arrange(1056, 602, shown)
+    assert frame.flow is not None
+    boxes = word_boxes(frame, shown)
+    assert ("in" in boxes) == (shown.inflow > 0.0) and "out" in boxes
+    cursor = frame.time_x(shown.now or 0.0)
+    for box in boxes.values():
+        assert not box.left() - 2.0 < cursor < box.right() + 2.0
+        assert frame.flow[0] < box.left() and box.right() < frame.flow[2]
+    assert len(boxes) < 2 or not boxes["in"].intersects(boxes["out"])
+
+
+def test_the_words_of_the_flow_plot_go_to_the_right_while_the_cursor_is_at_the_left() -> None:
+    answers = solve(CASES["cone"])
+    late = scene_of(answers, display_units("metric"), now=0.8 * float(answers.curve.time[-1]))
+    frame = arrange(1056, 602, late)
+    assert frame.flow is not None
+    early = scene_of(answers, display_units("metric"), now=frame.time(frame.flow[0] + 14.0))
+    middle = 0.5 * (frame.flow[0] + frame.flow[2])
+    assert word_boxes(frame, late)["out"].right() < middle < word_boxes(frame, early)["out"].left()
 
 
 @given(st.floats(1e-6, 1e6))

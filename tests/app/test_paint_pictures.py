@@ -15,6 +15,7 @@ from PySide6.QtWidgets import QApplication
 from headfall.case.faults import CaseError
 from headfall.quantities import display_units
 from headfall.study import solve
+from headfall_app.paint.kept import Kept
 from headfall_app.paint.layout import arrange
 from headfall_app.paint.paper import paint_curve, paint_flow, paint_sketch
 from headfall_app.paint.scene import Scene, scene_of
@@ -124,6 +125,33 @@ def test_paper_shows_the_whole_vessel_at_one_scale(application: QApplication, na
     seen = pixels(image)
     assert (seen == colour_of(paper.colour("liquid"))).any()
     assert not any(mark.key == "now" for mark in shown.marks)
+
+
+@pytest.mark.parametrize("ratio", [1.0, 2.0])
+@pytest.mark.parametrize("name", CASES)
+def test_what_is_kept_looks_as_if_it_were_painted_anew(application: QApplication, name: str, ratio: float) -> None:
+    shown, used, kept = scene(name), theme("dark"), Kept()
+
+    def painted(shown: Scene, keeps: Kept | None) -> np.ndarray:
+        image = QImage(round(WIDE * ratio), round(TALL * ratio), QImage.Format.Format_RGB32)
+        image.setDevicePixelRatio(ratio)
+        image.fill(used.colour("surface"))
+        painter = QPainter(image)
+        paint_stage(painter, arrange(WIDE, TALL, shown), shown, used, Attention(), keeps)
+        painter.end()
+        return image_bytes(image)
+
+    other = scene("box" if name != "box" else "cone")
+    for each in (shown, shown, other, shown):
+        difference = np.abs(painted(each, kept) - painted(each, None))
+        assert difference.max() <= 40
+        assert (difference > 4).mean() < 1e-4
+
+
+def image_bytes(image: QImage) -> np.ndarray:
+    """Return the picture's colours, shape (rows, columns, 4)."""
+    buffer = np.frombuffer(image.constBits(), dtype=np.uint8)
+    return buffer.reshape(image.height(), image.width(), 4)[:, :, :3].astype(int)
 
 
 LENGTHS = st.floats(0.3, 12.0)

@@ -173,7 +173,7 @@ def test_a_wrong_entry_is_told_and_the_last_good_answers_stay(open_page: OpenPag
     sentence = "80 L is a volume. Type a length, such as 80 mm or 3 1/8 in."
     document.set_wrong(("outlets", 0, "opening", "diameter"), "80 L", sentence, "Type it")
     wait_for(page.stale_line.isVisible)
-    assert page.stale_line.text() == "Last good answers, for outlet 1, diameter 50 mm. Mend the diameter to go on."
+    assert page.stale_line.text() == "Last good answers. Mend the outlet's diameter to go on."
     assert page.notes.notes[0].grade is Grade.STOP
     assert sentence in page.notes.notes[0].sentence
     assert page.answers_row.answers == said

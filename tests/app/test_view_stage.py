@@ -10,6 +10,7 @@ from PySide6.QtTest import QTest
 from PySide6.QtWidgets import QWidget
 
 from headfall.case.model import Case
+from headfall.quantities import parse
 from headfall_app.document import Document
 from headfall_app.paint.curve import cursor_plate
 from headfall_app.paint.dimensions import dimension_boxes
@@ -170,7 +171,7 @@ def test_escape_gives_the_time_back(page: TankPage) -> None:
 
 
 def test_pointing_at_a_dimension_points_at_its_entry_and_leaving_gives_back(page: TankPage, document: Document) -> None:
-    document.pointed = ("levels", "start")
+    document.cursor = document.pointed = ("levels", "start")
     scene = page.stage.scene
     assert scene is not None
     boxes = {size.path: box for size, box in dimension_boxes(page.stage.frame(scene), scene)}
@@ -265,6 +266,33 @@ def test_the_slider_says_its_value_and_its_mark(page: TankPage) -> None:
     assert page.slider.accessibleName() == "Inflow"
     assert page.slider.accessibleDescription().startswith("1 L/s. ")
     assert "largest that stays below overflow" in page.slider.accessibleDescription()
+
+
+@pytest.mark.parametrize(
+    ("units", "typed", "value", "unit"),
+    [
+        ("us", "2 L/s", "31.7", "US gal/min"),
+        ("us", "0 L/s", "nil", "US gal/min"),
+        ("us", "40 ft³/h", "40 ft³/h", "ft³/h"),
+        ("us", "40 US gal/min", "40 US gal/min", "US gal/min"),
+        ("metric", "40 L/min", "40 L/min", "L/min"),
+        ("metric", "7.2 m³/h", "7.2 m³/h", "m³/h"),
+        ("metric", "40 US gal/min", "2.52", "L/s"),
+        ("metric", "40 imp gal/min", "3.03", "L/s"),
+    ],
+)
+def test_the_slider_writes_in_the_units_of_the_answers(
+    page: TankPage, document: Document, units: str, typed: str, value: str, unit: str
+) -> None:
+    document.set(("units",), units, "Change the units")
+    document.set(("inflow", "rate"), parse(typed, "flow"), "Type it")
+    state = page.slider.state
+    assert state.value_text.startswith(value)
+    assert unit in state.mark_text
+    page.slider.setFocus()
+    QTest.keyClick(page.slider, Qt.Key.Key_Right)
+    assert document.case.inflow is not None and document.case.inflow.rate is not None
+    assert document.case.inflow.rate.unit == unit
 
 
 # The time cursor ------------------------------------------------------------------------------------------------------

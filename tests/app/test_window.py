@@ -215,7 +215,8 @@ def test_the_sheet_is_written_on_the_paper_chosen(window: Window, questions: Ans
     QTest.keyClick(window, Qt.Key.Key_E, CONTROL)
     assert questions.asked == ["sheet day_tank.pdf"]
     assert questions.sheet.read_bytes().startswith(b"%PDF")
-    assert window.message.said == f"The sheet was written to {questions.sheet}."
+    assert window.notice.said == f"The sheet was written to {questions.sheet}."
+    assert window.message.said == ""
 
 
 def test_no_sheet_is_written_while_an_entry_is_wrong(
@@ -309,3 +310,15 @@ def test_settings_that_make_no_sense_count_as_not_set(tmp_path: Path) -> None:
     settings = Settings(file)
     assert (settings.theme, settings.paper, settings.recent) == ("system", "a4", [])
     assert settings.geometry.isEmpty()
+
+
+def test_an_example_is_not_written_over(window: Window, questions: Answering, type_into: Type, tmp_path: Path) -> None:
+    example = resource_path("examples/header_tank.headfall")
+    before = example.read_bytes()
+    assert window.open_file(example)
+    change(window, type_into)
+    questions.save = tmp_path / "mine.headfall"
+    QTest.keyClick(window, Qt.Key.Key_S, CONTROL)
+    assert questions.asked == ["save header_tank.headfall"]
+    assert questions.save.exists()
+    assert example.read_bytes() == before

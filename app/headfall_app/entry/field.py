@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from PySide6.QtCore import Qt
+from PySide6.QtGui import QResizeEvent
 from PySide6.QtWidgets import QGridLayout, QSizePolicy, QWidget
 
 from headfall_app.document import Document
@@ -54,10 +55,12 @@ class Field(QWidget):
 
     def point(self) -> None:
         """Tell the document that this entry has the cursor."""
-        self.document.pointed = self.row.path
+        self.document.cursor = self.document.pointed = self.row.path
 
     def unpoint(self) -> None:
         """Tell the document that this entry has the cursor no more."""
+        if self.document.cursor == self.row.path:
+            self.document.cursor = None
         if self.document.pointed == self.row.path:
             self.document.pointed = None
 
@@ -66,6 +69,29 @@ class Field(QWidget):
         if self._echo.text() != text:
             self._echo.setText(text)
             self.editor.setAccessibleDescription(" ".join(filter(None, (self.row.tip, text))))
+        self.share_width()
+
+    def share_width(self) -> None:
+        """Give editor and echo the width that what stands in them needs; an editor of choices has it all."""
+
+    def resizeEvent(self, event: QResizeEvent) -> None:
+        super().resizeEvent(event)
+        self.share_width()
+
+    def room(self) -> int:
+        """Return what editor, echo and the gap between them have together [px]."""
+        return self.width() - LABEL_WIDTH - GAP
+
+    def set_echo_width(self, width: int) -> None:
+        """Give the echo some width beside the editor; with none of it the echo stands in the tooltip."""
+        self.hide_echo(width <= 0)
+        self._echo.setFixedWidth(max(width, 0))
+        aside = self._echo.text() if width <= 0 else ""
+        self.editor.setToolTip("\n".join(filter(None, (self.row.tip, aside))))
+
+    def echo_need(self) -> int:
+        """Return the width that the echo's words take [px]."""
+        return self._echo.fontMetrics().horizontalAdvance(self._echo.text())
 
     def hide_echo(self, hidden: bool = True) -> None:
         """Give the echo's width to the editor, or take it back."""

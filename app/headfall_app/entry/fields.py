@@ -7,7 +7,7 @@ from PySide6.QtWidgets import QWidget
 from headfall.quantities import Quantity
 from headfall_app.document import Document
 from headfall_app.entry.echo import echo_of
-from headfall_app.entry.field import Field
+from headfall_app.entry.field import ECHO_WIDTH, GAP, Field
 from headfall_app.entry.line import EntryLine
 from headfall_app.entry.plan import Row
 from headfall_app.entry.stepping import number_in, stepped, written
@@ -19,8 +19,8 @@ def _change_of(row: Row) -> str:
     return f"Change the {lowered(row.label)}"
 
 
-_SHORT = 62
-"""What a field beside its echo has room for [px]."""
+_FRAME = 18
+"""What border, paddings and the cursor of a line take beside its text [px]."""
 
 
 class LineField(Field):
@@ -109,11 +109,16 @@ class QuantityField(LineField):
 
     def __init__(self, row: Row, document: Document, parent: QWidget | None = None) -> None:
         super().__init__(row, document, parent)
-        self.line.textChanged.connect(self._fit)
+        self.line.textChanged.connect(self.share_width)
 
-    def _fit(self, text: str) -> None:
-        """Let a long text have the echo's width too."""
-        self.hide_echo(self.line.fontMetrics().horizontalAdvance(text) > _SHORT)
+    def share_width(self) -> None:
+        text = self.line.text() or self.line.placeholderText()
+        need = self.line.fontMetrics().horizontalAdvance(text) + _FRAME
+        echo, room = self.echo_need(), self.room() - GAP
+        if echo <= ECHO_WIDTH <= room - need:
+            self.set_echo_width(ECHO_WIDTH)
+        else:
+            self.set_echo_width(echo if 0 < echo <= room - need else 0)
 
     def text_of(self, value: object) -> str:
         return value.text if isinstance(value, Quantity) else ""

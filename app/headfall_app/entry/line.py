@@ -68,7 +68,9 @@ class EntryLine(QLineEdit):
 
     def focusOutEvent(self, event: QFocusEvent) -> None:
         super().focusOutEvent(event)
-        if event.reason() != Qt.FocusReason.PopupFocusReason:
+        if event.reason() == Qt.FocusReason.PopupFocusReason:
+            return
+        if event.reason() != Qt.FocusReason.ActiveWindowFocusReason:
             # The number stands at the beginning: it is what must be seen of a text that is too long.
             self.setCursorPosition(0)
-            self.left.emit()
+        self.left.emit()

@@ -41,6 +41,7 @@ class EntryPanel(QWidget):
         self._column = QVBoxLayout(self._column_widget)
         self._column.setSpacing(0)
         self._seen: _Seen | None = None
+        self._begins_anew = False
         self._column.addStretch(1)
         self._area = QScrollArea(self)
         self._area.setObjectName("entry")
@@ -56,7 +57,7 @@ class EntryPanel(QWidget):
         document.changed.connect(self._follow)
         document.answers_changed.connect(self._follow_answers)
         document.pointed_changed.connect(self._light)
-        document.replaced.connect(self._go_to_top)
+        document.replaced.connect(self._begin_anew)
         self._follow()
 
     def set_theme(self, theme: Theme) -> None:
@@ -112,10 +113,21 @@ class EntryPanel(QWidget):
         fits = [box for box in self._boxes if box.group.path and path[: len(box.group.path)] == box.group.path]
         return fits[0] if fits else self._boxes[-1] if len(path) == 1 else None
 
+    def _begin_anew(self) -> None:
+        self._begins_anew = True
+
     def _go_to_top(self) -> None:
+        # Groups that go can take the cursor with them, and the area follows the cursor: so only when all is in place.
+        self._begins_anew = False
+        self._settle()
         self._area.verticalScrollBar().setValue(0)
 
     def _follow(self) -> None:
+        self._show_document()
+        if self._begins_anew:
+            self._go_to_top()
+
+    def _show_document(self) -> None:
         before, self._seen = self._seen, (self._document.case, self._document.wrong, self._document.display)
         groups = self._shown if _same_rows(before, self._seen) else groups_of(self._document.case)
         if groups == self._shown:

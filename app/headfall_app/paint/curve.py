@@ -95,25 +95,60 @@ def paint_run(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> No
 
 
 def not_defended_box(frame: Frame, scene: Scene) -> QRectF:
-    """Return where it stands down to which level the curve is defended: at the left, where no curve runs."""
+    """Return where it stands down to which level the curve is defended: by that level, where no line runs."""
+    return _not_defended_place(frame, scene)[0]
+
+
+def _not_defended_place(frame: Frame, scene: Scene) -> tuple[QRectF, bool]:
+    """Return the words' box and whether it is clear of every curve."""
     if scene.not_defended is None or frame.plot is None:
-        return QRectF()
-    left, _, _, bottom = frame.plot
+        return QRectF(), False
+    left, top, right, bottom = frame.plot
     edge = frame.row(scene.not_defended)
-    end = frame.time(left + 14.0 + text_width(scene.not_defended_text, 11))
-    runs = (scene.curve_low, scene.curve_high)
-    lowest = max(frame.y(level_at(run, time)) for run in runs for time in (0.0, end))
-    inside = bottom - edge > 26.0 and lowest > edge - 20.0
-    row = max(edge + 13.0, min(lowest + 14.0, bottom - 10.0)) if inside else edge - 11.0
-    return lettering.text_box(QPointF(left + 9.0, row), scene.not_defended_text, 11)
+    wide = text_width(scene.not_defended_text, 11)
+    columns = [float(column) for column in np.arange(left + 9.0, max(right - wide - 6.0, left + 10.0), 12.0)]
+    below = [edge + 13.0 + step for step in range(0, 40, 4)]
+    above = [edge - 11.0 - step for step in range(0, 60, 4)]
+    rows = [row for row in (*below, *above) if top + 10.0 < row < bottom - 8.0]
+    boxes = [
+        lettering.text_box(QPointF(column, row), scene.not_defended_text, 11) for row in rows for column in columns
+    ]
+    levels = [frame.row(mark.level) for mark in scene.marks if mark.key != "now"]
+    cursor = frame.time_x(scene.now) if scene.now is not None else None
+    arrival = arrival_box(frame, scene)
+
+    def keeps_clear(box: QRectF) -> bool:
+        struck = cursor is not None and box.left() - 8.0 < cursor < box.right() + 8.0
+        return not struck and all(abs(box.center().y() - row) > 9.0 for row in levels)
+
+    # Nothing struck at all is best; a level line or the cursor under the plate is borne, a curve is not.
+    for wanted in (keeps_clear, lambda box: not keeps_clear(box)):
+        for box in boxes:
+            if wanted(box) and not _meets_curve(frame, scene, box, arrival):
+                return box, True
+    return lettering.text_box(QPointF(left + 9.0, edge - 11.0), scene.not_defended_text, 11), False
+
+
+def _meets_curve(frame: Frame, scene: Scene, box: QRectF, arrival: QRectF) -> bool:
+    """Return whether a run or the time of its end comes within a few pixels of a box."""
+    if arrival.intersects(box):
+        return True
+    times = np.linspace(frame.time(box.left() - 6.0), frame.time(box.right() + 6.0), 16)
+    for run in (scene.curve_low, scene.curve, scene.curve_high):
+        within = times[times <= run.time[-1]] if run.ends != "settled" else times
+        rows = frame.bottom - np.interp(within, run.time, run.level) * frame.pixels_per_metre
+        if len(rows) and rows.min() < box.bottom() + 3.0 and rows.max() > box.top() - 3.0:
+            return True
+    return False
 
 
 def paint_not_defended_text(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
-    """Write down to which level the curve is defended."""
-    box = not_defended_box(frame, scene)
+    """Write down to which level the curve is defended, without a plate where that would cut a curve."""
+    box, clear = _not_defended_place(frame, scene)
     if not box.isNull():
         at = QPointF(box.left(), box.center().y())
-        lettering.write(painter, at, scene.not_defended_text, theme.colour("ink"), 11, plate=theme.colour("surface"))
+        plate = theme.colour("surface") if clear else None
+        lettering.write(painter, at, scene.not_defended_text, theme.colour("ink"), 11, plate=plate)
 
 
 def paint_arrival(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
@@ -139,8 +174,23 @@ def paint_arrival(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -
 
 def _arrival_text(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, ring: float, row: float) -> None:
     arrival = scene.arrival
-    assert arrival is not None and frame.plot is not None
+    assert arrival is not None
+    box = arrival_box(frame, scene)
+    at = box.center().y()
+    ink = theme.colour("limit" if arrival.overflows else "ink")
+    painter.setPen(pen(theme.colour("limit" if arrival.overflows else "muted"), 1.0))
+    painter.drawLine(QLineF(round(ring) + 0.5, row, round(ring) + 0.5, at))
+    plate = theme.colour("surface")
+    lettering.write(painter, box.center(), arrival.text, ink, 12, 600, lettering.CENTRE, plate=plate)
+
+
+def arrival_box(frame: Frame, scene: Scene) -> QRectF:
+    """Return where the time of the end of the run stands, empty without one."""
+    arrival = scene.arrival
+    if arrival is None or frame.plot is None:
+        return QRectF()
     left, top, right, bottom = frame.plot
+    row, ring = frame.row(arrival.level) + 0.5, frame.time_x(arrival.typical)
     half = 0.5 * text_width(arrival.text, 12, 600) + 4.0
     middle = min(max(ring, left + half), right - half) if right - left > 2.0 * half else 0.5 * (left + right)
     runs = (scene.curve_low, scene.curve_high, scene.curve)
@@ -151,11 +201,7 @@ def _arrival_text(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, r
     while top + 10.0 < at < bottom - 10.0 and any(abs(at - line) < 11.0 for line in lines):
         at += step
     at = min(max(at, top + 10.0), bottom - 10.0)
-    ink = theme.colour("limit" if arrival.overflows else "ink")
-    painter.setPen(pen(theme.colour("limit" if arrival.overflows else "muted"), 1.0))
-    painter.drawLine(QLineF(round(ring) + 0.5, row, round(ring) + 0.5, at))
-    plate = theme.colour("surface")
-    lettering.write(painter, QPointF(middle, at), arrival.text, ink, 12, 600, lettering.CENTRE, plate=plate)
+    return lettering.text_box(QPointF(middle, at), arrival.text, 12, 600, lettering.CENTRE)
 
 
 def remark_box(frame: Frame, scene: Scene) -> QRectF:

@@ -9,6 +9,7 @@ from PySide6.QtGui import QPainter
 
 from headfall_app.paint import lettering
 from headfall_app.paint.fonts import text_width
+from headfall_app.paint.kept import Kept, paint_kept
 from headfall_app.paint.layout import FLAG, STAFF, Frame
 from headfall_app.paint.levels import STYLES
 from headfall_app.paint.scene import Scene
@@ -53,14 +54,20 @@ def placed_flags(frame: Frame, scene: Scene) -> list[Flag]:
 
 
 def paint_flags(
-    painter: QPainter, frame: Frame, scene: Scene, theme: Theme, hovered: str = "", focused: str = ""
+    painter: QPainter,
+    frame: Frame,
+    scene: Scene,
+    theme: Theme,
+    hovered: str = "",
+    focused: str = "",
+    kept: Kept | None = None,
 ) -> None:
     """Paint the leads and flags; ``hovered`` and ``focused`` are the keys of the flags under pointer and keyboard."""
     flags = placed_flags(frame, scene)
     for flag in flags:
         _lead(painter, frame, flag, theme)
     for flag in flags:
-        _flag(painter, flag, theme, flag.mark.path is not None and flag.mark.key == hovered)
+        _flag(painter, flag, theme, flag.mark.path is not None and flag.mark.key == hovered, kept)
         if flag.mark.path is not None and flag.mark.key == focused:
             painter.setPen(pen(theme.colour("accent"), 2.0))
             painter.drawRoundedRect(flag.box.adjusted(-3.0, -3.0, 3.0, 3.0), 4.0, 4.0)
@@ -80,23 +87,31 @@ def _lead(painter: QPainter, frame: Frame, flag: Flag, theme: Theme) -> None:
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
 
 
-def _flag(painter: QPainter, flag: Flag, theme: Theme, hovered: bool) -> None:
+def _flag(painter: QPainter, flag: Flag, theme: Theme, hovered: bool, kept: Kept | None) -> None:
     filled = flag.mark.key == "now"
     role = STYLES[flag.mark.key][0]
-    colour = theme.colour(role)
-    width = 2.0 if hovered else 1.0
-    painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
-    painter.setPen(pen(colour, width) if not filled else Qt.PenStyle.NoPen)
-    painter.setBrush(colour if filled else theme.colour("surface"))
-    inset = 0.0 if filled else 0.5 * width
-    painter.drawRoundedRect(flag.box.adjusted(inset, inset, -inset, -inset), 2.0, 2.0)
-    painter.setBrush(Qt.BrushStyle.NoBrush)
+
+    def frame(on: QPainter) -> None:
+        _paint_frame(on, flag.box, theme, role, filled, hovered)
+
+    name = f"flag {role} {filled} {hovered}"
+    paint_kept(kept, painter, name, theme, flag.box.toAlignedRect(), frame)
     ink = theme.colour("on_accent") if filled else theme.colour("ink" if role == "muted" else role)
     middle = flag.box.center().y()
     weight = 600 if filled else 400
     room = FLAG - 17.0 - text_width(flag.mark.text, 12, 600)
     size = 12 if text_width(flag.mark.name, 12, weight) <= room else 11
-    name = lettering.elided(flag.mark.name, room, size, weight)
-    lettering.write(painter, QPointF(flag.box.left() + 7.0, middle), name, ink, size, weight)
+    called = lettering.elided(flag.mark.name, room, size, weight)
+    lettering.write(painter, QPointF(flag.box.left() + 7.0, middle), called, ink, size, weight)
     at = QPointF(flag.box.right() - 6.0, middle)
     lettering.write(painter, at, flag.mark.text, ink, 12, 600, lettering.RIGHT)
+
+
+def _paint_frame(painter: QPainter, box: QRectF, theme: Theme, role: str, filled: bool, hovered: bool) -> None:
+    colour = theme.colour(role)
+    width = 2.0 if hovered else 1.0
+    painter.setPen(pen(colour, width) if not filled else Qt.PenStyle.NoPen)
+    painter.setBrush(colour if filled else theme.colour("surface"))
+    inset = 0.0 if filled else 0.5 * width
+    painter.drawRoundedRect(box.adjusted(inset, inset, -inset, -inset), 2.0, 2.0)
+    painter.setBrush(Qt.BrushStyle.NoBrush)

@@ -39,6 +39,12 @@ def metrics(nominal: int, weight: int = 400) -> QFontMetricsF:
     return QFontMetricsF(font(nominal, weight))
 
 
+@lru_cache(maxsize=64)
+def cap_height(nominal: int, weight: int = 400) -> float:
+    """Return how tall a capital is drawn [logical px]."""
+    return metrics(nominal, weight).capHeight()
+
+
 @lru_cache(maxsize=4096)
 def text_width(text: str, nominal: int, weight: int = 400) -> float:
     """Return how wide a text is drawn [logical px]."""

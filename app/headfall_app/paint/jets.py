@@ -9,6 +9,7 @@ import numpy as np
 from PySide6.QtCore import QPointF, QRectF
 from PySide6.QtGui import QBrush, QColor, QLinearGradient, QPainter
 
+from headfall.quantities.display import NO_BREAK
 from headfall_app.paint import lettering
 from headfall_app.paint.fonts import text_width
 from headfall_app.paint.layout import JET, Frame
@@ -16,6 +17,7 @@ from headfall_app.paint.outline_geometry import floor_under, outlet_across, surf
 from headfall_app.paint.scene import Scene
 from headfall_app.paint.scene_outlets import JET_VELOCITY_COEFFICIENT, DrawnOutlet
 from headfall_app.paint.section import WALL
+from headfall_app.paint.staff import numbers_left
 from headfall_app.paint.strokes import fill, pen, plumb_line, polygon, ribbon
 from headfall_app.paint.theme import Theme
 
@@ -151,11 +153,28 @@ def _over(frame: Frame, scene: Scene, index: int, foot: QPointF) -> Iterator[Lab
     def clear(row: float) -> bool:
         return all(abs(row - line) > 10.0 for line in rows)
 
+    def wrapped(row: float, flow: str) -> Label:
+        number, _, unit = flow.partition(NO_BREAK)
+        upper, middle = QPointF(left, row - 2.0 * _LINE), QPointF(left, row - _LINE)
+        lower = QPointF(left, row)
+        return (
+            (upper, outlet.size_text, lettering.LEFT),
+            (middle, number, lettering.LEFT),
+            (lower, unit, lettering.LEFT),
+        )
+
     lifts = [foot.y() - tall - lift for lift in range(14, 120, 2)]
     for flow in flows:
         yield from (beside(row, flow) for row in lifts if clear(row))
         yield from (stacked(row, flow) for row in lifts if clear(row) and clear(row - _LINE))
-    yield stacked(lifts[0], flows[-1])
+    yield from (wrapped(row, flows[-1]) for row in lifts if all(clear(row - _LINE * line) for line in range(3)))
+    yield from (((QPointF(left, row), outlet.size_text, lettering.LEFT),) for row in lifts if clear(row))
+    # Where even the size alone finds no room, the label goes into the vessel.
+    inside = foot.x() - 8.0
+    yield (
+        (QPointF(inside, lifts[0] - _LINE), outlet.size_text, lettering.RIGHT),
+        (QPointF(inside, lifts[0]), flows[-1], lettering.RIGHT),
+    )
 
 
 def _label(
@@ -166,23 +185,25 @@ def _label(
     weight = 600 if outlet.lit else 400
     # Left of the vessel stand dimensions.
     least = frame.across.left - 14.0 if frame.plan.columns else 0.0
+    most = numbers_left(frame, scene) - 5.0
     chosen: Label | None = None
     boxes: Sequence[QRectF] = ()
     for chosen in ways:
         boxes = [lettering.text_box(at, text, 12, weight, align) for at, text, align in chosen if text]
         if not any(box.intersects(other) for box in boxes for other in taken) and all(
-            box.left() >= least and box.right() <= frame.staff_left - 22.0 for box in boxes
+            box.left() >= least and box.right() <= most for box in boxes
         ):
             break
     taken.extend(boxes)
     if chosen is None:
         return QRectF()
-    (size_at, size, size_align), (flow_at, flow, flow_align) = chosen
+    (size_at, size, size_align), *flows = chosen
     ground = theme.colour("surface")
     ink = theme.colour("accent" if outlet.lit else "ink")
     box = lettering.write(painter, size_at, size, ink, 12, weight, size_align, plate=ground)
-    if flow:
-        lettering.write(painter, flow_at, flow, theme.colour("accent"), align=flow_align, plate=ground)
+    for at, flow, align in flows:
+        if flow:
+            lettering.write(painter, at, flow, theme.colour("accent"), align=align, plate=ground)
     return box
 
 

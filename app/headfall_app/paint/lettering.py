@@ -5,7 +5,7 @@ from __future__ import annotations
 from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QColor, QPainter
 
-from headfall_app.paint.fonts import font, metrics, text_width
+from headfall_app.paint.fonts import cap_height, font, metrics, text_width
 
 LEFT, CENTRE, RIGHT = 0.0, 0.5, 1.0
 
@@ -13,7 +13,7 @@ LEFT, CENTRE, RIGHT = 0.0, 0.5, 1.0
 def text_box(at: QPointF, text: str, nominal: int = 12, weight: int = 400, align: float = LEFT) -> QRectF:
     """Return the box a text takes whose middle height is at a point."""
     width = text_width(text, nominal, weight)
-    height = metrics(nominal, weight).capHeight() + 8.0
+    height = cap_height(nominal, weight) + 8.0
     return QRectF(at.x() - align * width, at.y() - 0.5 * height, width, height)
 
 
@@ -33,7 +33,7 @@ def write(
         painter.fillRect(box.adjusted(-4.0, -1.0, 4.0, 1.0), plate)
     painter.setFont(font(nominal, weight))
     painter.setPen(colour)
-    baseline = at.y() + 0.5 * metrics(nominal, weight).capHeight()
+    baseline = at.y() + 0.5 * cap_height(nominal, weight)
     painter.drawText(QPointF(box.left(), baseline), text)
     return box
 

@@ -116,7 +116,7 @@ def scene_of(answers: Answers, display: DisplayUnits, *, now: float | None = Non
         settling=_settling(answers),
         settles_at=None if answers.equilibrium.overflows else settles.typical,
         not_defended=limit,
-        not_defended_text="" if limit is None else f"do not rely on it below {display.text(limit, 'level')}",
+        not_defended_text="" if limit is None else f"not to be relied on below {display.text(limit, 'level')}",
         shaded_text=_shaded(answers),
         display=display,
     )

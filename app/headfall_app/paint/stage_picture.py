@@ -12,6 +12,7 @@ from headfall_app.paint.dimensions import paint_dimensions
 from headfall_app.paint.flags import paint_flags
 from headfall_app.paint.fonts import text_width
 from headfall_app.paint.jets import paint_jets
+from headfall_app.paint.kept import Kept, paint_kept, vessel_box, vessel_key
 from headfall_app.paint.layout import STAFF_NUMBERS, Frame
 from headfall_app.paint.levels import paint_plot_levels, paint_section_levels
 from headfall_app.paint.scene import Scene
@@ -36,29 +37,39 @@ class Attention:
     focused: str = ""
 
 
-def paint_stage(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, attention: Attention) -> None:
-    """Paint the stage; the ground is already painted."""
+def paint_stage(
+    painter: QPainter, frame: Frame, scene: Scene, theme: Theme, attention: Attention, kept: Kept | None = None
+) -> None:
+    """Paint the stage; the ground is already painted. ``kept`` holds what need not be painted again."""
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
-    paint_section(painter, frame, scene, theme)
-    paint_staff(painter, frame, scene, theme)
+    paint_section(painter, frame, scene, theme, kept)
+    paint_staff(painter, frame, scene, theme, kept)
     paint_plots(painter, frame, scene, theme, attention.focused == "cursor")
     _titles(painter, frame, scene, theme)
     if frame.can_be_cut:
-        paint_thumbnail(painter, frame, scene, theme, attention.hovered == "outline")
-    paint_flags(painter, frame, scene, theme, attention.hovered, attention.focused)
+        paint_thumbnail(painter, frame, scene, theme, attention.hovered == "outline", kept)
+    paint_flags(painter, frame, scene, theme, attention.hovered, attention.focused, kept)
 
 
-def paint_section(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+def paint_section(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, kept: Kept | None = None) -> None:
     """Paint the vessel with its liquid, levels, jets and dimensions."""
-    paint_vessel(painter, frame, scene, theme)
+    key = vessel_key(frame, scene, theme)
+
+    def vessel(on: QPainter) -> None:
+        paint_vessel(on, frame, scene, theme)
+
+    def inner_lines(on: QPainter) -> None:
+        paint_inner_lines(on, frame, scene, theme)
+
+    paint_kept(kept, painter, "vessel", key, vessel_box(frame, 12), vessel, theme.colour("surface"))
     paint_liquid(painter, frame, scene, theme)
-    paint_inner_lines(painter, frame, scene, theme)
+    paint_kept(kept, painter, "inner lines", key, vessel_box(frame, 16), inner_lines)
     ground = ground_line(frame, scene)
     if ground is not None:
         paint_ground(painter, frame, theme, *ground)
     paint_stream(painter, frame, scene, theme)
     paint_section_levels(painter, frame, scene, theme)
-    paint_dimensions(painter, frame, scene, theme)
+    paint_dimensions(painter, frame, scene, theme, kept)
     paint_jets(painter, frame, scene, theme)
 
 

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
+from functools import lru_cache
 from typing import Any, cast
 
 import numpy as np
@@ -27,7 +28,13 @@ DASHES: dict[str, tuple[float, ...]] = {
 
 def pen(colour: QColor, width: float = 1.0, dash: str = "") -> QPen:
     """Return a pen; a dash's lengths are pixels, whatever the width."""
-    made = QPen(colour, width)
+    # A copy of a kept pen shares its data, and may be changed freely.
+    return QPen(_pen(colour.rgba(), width, dash))
+
+
+@lru_cache(maxsize=128)
+def _pen(colour: int, width: float, dash: str) -> QPen:
+    made = QPen(QColor.fromRgba(colour), width)
     made.setCapStyle(Qt.PenCapStyle.FlatCap)
     if dash:
         made.setDashPattern([length / width for length in DASHES[dash]])
@@ -76,12 +83,20 @@ def ribbon(x: Array, y: Array, width: float) -> QPolygonF:
     x, y = x[kept], y[kept]
     if len(x) < 2:
         return QPolygonF()
-    tangent_x, tangent_y = np.gradient(x), np.gradient(y)
+    tangent_x, tangent_y = _steps(x), _steps(y)
     scale = 0.5 * width / np.maximum(np.hypot(tangent_x, tangent_y), 1e-12)
     across_x, across_y = -tangent_y * scale, tangent_x * scale
     return polygon(
         np.concatenate((x + across_x, (x - across_x)[::-1])), np.concatenate((y + across_y, (y - across_y)[::-1]))
     )
+
+
+def _steps(values: Array) -> Array:
+    """Return the step from the point before to the point after each one."""
+    steps = np.empty_like(values)
+    steps[1:-1] = values[2:] - values[:-2]
+    steps[0], steps[-1] = values[1] - values[0], values[-1] - values[-2]
+    return steps
 
 
 def fill(painter: QPainter, shape: QPolygonF, colour: QColor | QBrush, smooth: bool = True) -> None:

@@ -41,8 +41,8 @@ class Theme:
         return self.roles[role]
 
     def colour(self, role: str) -> QColor:
-        """Return a role's colour."""
-        return QColor(self.roles[role])
+        """Return a role's colour. Treat it as frozen: it is the same object every time."""
+        return _colour(self.roles[role])
 
     def mixed(self, role: str, other: str, share: float) -> QColor:
         """Return ``share`` of a role over another one, opaque, since a printed page knows no transparency."""
@@ -77,6 +77,11 @@ def _themes() -> dict[str, dict[str, str]]:
 def theme(name: str) -> Theme:
     """Return the set called ``light``, ``dark`` or ``paper``."""
     return Theme(name, _themes()[name])
+
+
+@lru_cache(maxsize=256)
+def _colour(name: str) -> QColor:
+    return QColor(name)
 
 
 @lru_cache(maxsize=8)

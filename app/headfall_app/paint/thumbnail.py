@@ -8,6 +8,7 @@ from PySide6.QtGui import QPainter
 
 from headfall_app.paint import lettering
 from headfall_app.paint.fonts import text_width
+from headfall_app.paint.kept import Kept, paint_kept, vessel_key
 from headfall_app.paint.layout import Frame
 from headfall_app.paint.outline_geometry import extent
 from headfall_app.paint.scene import Scene
@@ -46,8 +47,22 @@ def _few_points(wall: np.ndarray, scale: float) -> np.ndarray:
     return wall[np.concatenate(([True], moved[:-1] | moved[1:], [True]))]
 
 
-def paint_thumbnail(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, hovered: bool) -> None:
+def paint_thumbnail(
+    painter: QPainter, frame: Frame, scene: Scene, theme: Theme, hovered: bool, kept: Kept | None = None
+) -> None:
     """Paint the outline: what is shown tinted and solid, what is left out dotted."""
+    box = thumbnail_box(frame, scene)
+
+    def outline(on: QPainter) -> None:
+        _paint_outline(on, frame, scene, theme, hovered)
+
+    key = (vessel_key(frame, scene, theme), hovered)
+    paint_kept(kept, painter, "outline", key, box.adjusted(-2.0, -2.0, 4.0, 2.0).toAlignedRect(), outline)
+    ink = theme.colour("accent" if hovered else "muted")
+    lettering.write(painter, QPointF(box.left() + 2.0, TITLE_ROW), thumbnail_text(frame), ink, 11)
+
+
+def _paint_outline(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, hovered: bool) -> None:
     scale, left, right = _fit(frame, scene)
     origin = frame.across.right - (right - left) * scale
     bottom = TITLE_ROW + 0.5 * scene.height * scale
@@ -67,6 +82,3 @@ def paint_thumbnail(painter: QPainter, frame: Frame, scene: Scene, theme: Theme,
         painter.restore()
     painter.setPen(pen(colour, 1.2, "left_out"))
     draw(shape)
-    box = thumbnail_box(frame, scene)
-    ink = theme.colour("accent" if hovered else "muted")
-    lettering.write(painter, QPointF(box.left() + 2.0, TITLE_ROW), thumbnail_text(frame), ink, 11)

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+import re
 
 from PySide6.QtCore import QEvent, QSize, Qt, QTimer, Signal
 from PySide6.QtGui import QEnterEvent, QFocusEvent, QKeyEvent, QMouseEvent, QPainter, QPaintEvent
@@ -16,6 +17,8 @@ from headfall_app.paint.ticks import nice_step
 
 _TEXT = "Change the inflow"
 _PAST_MARK = 1.31
+_METRIC = re.compile(r"[mcdhkM]?L\b|[mcdk]?m³|[a-z]*(liter|litre|meter|metre)")
+"""The beginning of a metric flow: a volume in litres or cubic metres, as written by the table or out of it."""
 _STEPS = {
     Qt.Key.Key_Up: 1,
     Qt.Key.Key_Right: 1,
@@ -24,6 +27,13 @@ _STEPS = {
     Qt.Key.Key_PageUp: 10,
     Qt.Key.Key_PageDown: -10,
 }
+
+
+def is_of_system(unit: str, system: str) -> bool:
+    """Return whether a unit of flow is one of the display's own system, ``metric`` or ``us``; imperial is neither."""
+    if unit.startswith("imp"):
+        return False
+    return (_METRIC.match(unit) is not None) == (system == "metric")
 
 
 class InflowSlider(QWidget):
@@ -43,7 +53,7 @@ class InflowSlider(QWidget):
         # Mouse moves only store a value: it is set once a turn of the event loop, so once a paint.
         self._setting = QTimer(self, singleShot=True, interval=0)
         self._setting.timeout.connect(self._set_wanted)
-        self.setAttribute(Qt.WidgetAttribute.WA_OpaquePaintEvent)
+        # Not marked opaque: Qt would cut it out of the stage's paint, and a stage with a hole in it is painted slowly.
         self.setFocusPolicy(Qt.FocusPolicy.StrongFocus)
         self.setMinimumSize(240, 80)
         self.setCursor(Qt.CursorShape.PointingHandCursor)
@@ -69,9 +79,9 @@ class InflowSlider(QWidget):
 
     @property
     def unit(self) -> str:
-        """The unit in which the slider writes: the one typed with a flow in it, else the display's."""
-        typed = self.typed
-        return typed.unit if typed is not None and typed.value > 0.0 else self._document.display.unit("flow")
+        """The unit in which the slider writes: that of a flow typed in the display's own system, else the display's."""
+        typed, display = self.typed, self._document.display
+        return typed.unit if typed is not None and is_of_system(typed.unit, display.system) else display.unit("flow")
 
     @property
     def value(self) -> float:
@@ -100,15 +110,20 @@ class InflowSlider(QWidget):
     @property
     def state(self) -> SliderState:
         """What is painted."""
-        mark = self.mark
-        text = f"{self._document.display.text(mark, 'flow')}: largest that stays below overflow" if mark else ""
-        if mark and self.typed is not None and self.typed.value > 0.0:
-            text = f"{self._written(mark).text}: largest that stays below overflow"
+        mark, typed = self.mark, self.typed
+        text = f"{self._shown(mark)}: largest that stays below overflow" if mark else ""
         if self._wanted is not None:
             shown = self._written(self._wanted).text
+        elif typed is None or typed.value <= 0.0:
+            shown = "nil"
         else:
-            shown = self.typed.text if self.typed is not None and self.value > 0.0 else "nil"
+            shown = typed.text if typed.unit == self.unit else self._shown(typed.value)
         return SliderState(self.value, self.end, mark, shown, text)
+
+    def _shown(self, value: float) -> str:
+        """Return a flow as the answers show it, or in the unit typed."""
+        display = self._document.display
+        return display.text(value, "flow") if self.unit == display.unit("flow") else self._written(value).text
 
     def _written(self, value: float) -> Quantity:
         return written(value, self.unit, "flow")

@@ -7,9 +7,9 @@ from PySide6.QtGui import QFocusEvent, QKeyEvent, QMouseEvent, QPainter, QPaintE
 from PySide6.QtWidgets import QWidget
 
 from headfall.answers import Answers
-from headfall.case.model import Path
 from headfall_app.document import Document
 from headfall_app.paint import lettering
+from headfall_app.paint.kept import Kept
 from headfall_app.paint.layout import Frame, arrange
 from headfall_app.paint.scene import Scene
 from headfall_app.paint.stage_picture import Attention, paint_stage
@@ -50,10 +50,10 @@ class Stage(QWidget):
         self._grip = 0.0
         self._drags_time = False
         self._time_before = 0.0
-        self._pointed_before: Path | None = None
         self._points = False
         self._shown = ShownScene(document)
-        self.setAttribute(Qt.WidgetAttribute.WA_OpaquePaintEvent)
+        self._kept = Kept()
+        # Not marked opaque: Qt would paint it twice, by itself and again under the slider.
         self.setMouseTracking(True)
         self.setFocusPolicy(Qt.FocusPolicy.StrongFocus)
         self.setMinimumSize(LEAST_WIDTH, LEAST_HEIGHT)
@@ -122,7 +122,7 @@ class Stage(QWidget):
             return
         theme = self._theme.greyed if self._document.is_stale else self._theme
         attention = Attention(self._hovered, self._focused if self.hasFocus() else "")
-        paint_stage(painter, self.frame(scene), scene, theme, attention)
+        paint_stage(painter, self.frame(scene), scene, theme, attention, self._kept)
 
     def resizeEvent(self, event: QResizeEvent) -> None:
         super().resizeEvent(event)
@@ -208,13 +208,11 @@ class Stage(QWidget):
             self._hovered = key
             self.update()
         if target.path is not None and target.path != self._document.pointed:
-            if not self._points:
-                self._pointed_before = self._document.pointed
             self._points = True
             self._document.pointed = target.path
         elif target.path is None and self._points:
             self._points = False
-            self._document.pointed = self._pointed_before
+            self._document.pointed = self._document.cursor
 
     # Keyboard ---------------------------------------------------------------------------------------------------------
 
