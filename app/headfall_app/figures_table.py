@@ -17,7 +17,7 @@ def figures_table(answers: Answers, display: DisplayUnits | None = None) -> str:
     """Return the answers as lines of text, in the case's display units unless others are given."""
     display = display or display_units(answers.case.units or "metric")
     lines = [_heading(answers), ""]
-    for block in (_vessel, _draw_down, _equilibrium, _sizing, _coefficients):
+    for block in (_vessel, _draw_down, _equilibrium, _sizing, _coefficients, _beside, _stages):
         rows = list(block(answers, display))
         lines += [*rows, ""] if rows else []
     lines += _checks(answers)
@@ -32,7 +32,7 @@ def _heading(answers: Answers) -> str:
 
 
 def _row(label: str, value: str, remark: str = "") -> str:
-    return f"{label:<{_LABEL}}{value:<{_VALUE}}{remark}".rstrip()
+    return f"{label:<{_LABEL - 2}}  {value:<{_VALUE - 2}}  {remark}".rstrip()
 
 
 def _range(figure: Figure, kind: str, display: DisplayUnits) -> str:
@@ -73,7 +73,9 @@ def _draw_down(answers: Answers, display: DisplayUnits) -> Iterator[str]:
 
 def _equilibrium(answers: Answers, display: DisplayUnits) -> Iterator[str]:
     rest = answers.equilibrium
-    if rest.level.typical is None:
+    if rest.surges_at is not None:
+        yield _row("Settles at", "no steady level", rest.reason)
+    elif rest.level.typical is None:
         yield _row("Settles at", "above the top", rest.reason)
     else:
         remark = rest.reason or _range(rest.level, "level", display)
@@ -100,13 +102,59 @@ def _one_sizing(sizing: Sizing, display: DisplayUnits) -> Iterator[str]:
         yield _row(label, f"{sizing.scale:.3g} of its size")
     else:
         yield _row(label, "none", sizing.reason)
+    kind = _ACHIEVED[sizing.target]
     for neighbour in sizing.neighbours:
-        time = neighbour.achieved_time
-        value = "never reaches it" if time.typical is None else display.text(time.typical, "time")
-        chosen = "smallest that meets it" if neighbour.standard == sizing.standard else ""
+        found = neighbour.achieved
+        value = "never reaches it" if found.typical is None else display.text(found.typical, kind)
+        best = "largest" if sizing.target == "flow_at" else "smallest"
+        chosen = f"{best} that meets it" if neighbour.standard == sizing.standard else ""
         yield _row(
-            f"  with {neighbour.standard}", value, "  ".join(filter(None, (_range(time, "time", display), chosen)))
+            f"  with {neighbour.standard}", value, "  ".join(filter(None, (_range(found, kind, display), chosen)))
         )
+
+
+_ACHIEVED = {"drain_time": "time", "highest_level": "level", "flow_at": "flow"}
+_WHY = {
+    "dip": "air may be drawn in",
+    "transition": "neither laminar nor turbulent",
+    "low_reynolds": "below the coefficient's Reynolds numbers",
+    "part_full": "partly covered or part-full",
+    "changing_control": "between weir and orifice",
+}
+
+
+def _beside(answers: Answers, display: DisplayUnits) -> Iterator[str]:
+    """What acts on the outlets, and the tables asked for."""
+    if answers.headspace is not None:
+        lowest = display.text(answers.headspace.lowest, "pressure")
+        yield _row("Lowest gauge pressure", lowest, f"at {display.text(answers.headspace.lowest_level, 'level')}")
+    if answers.receiver_level is not None:
+        yield _row("Receiving vessel, at the end", display.text(answers.receiver_level, "level"))
+    for part in answers.doubtful:
+        span = f"{display.number(part.low, 'level')} to {display.text(part.high, 'level')}"
+        yield _row("Not to be relied on", span, f"{part.outlet}: {_WHY[part.why]}")
+    for moment in answers.at_times:
+        level = "the run has ended" if moment.level is None else display.text(moment.level, "level")
+        flow = "" if moment.outflow is None else f"{display.text(moment.outflow, 'flow')} out"
+        yield _row(f"After {display.text(moment.time, 'time')}", level, flow)
+    for state in answers.at_temperatures:
+        time = "never" if state.time.typical is None else display.text(state.time.typical, "time")
+        viscosity = display.text(state.viscosity, "viscosity")
+        remark = "  ".join(filter(None, (_range(state.time, "time", display), viscosity)))
+        yield _row(f"At {display.text(state.temperature, 'temperature')}", time, remark)
+
+
+def _stages(answers: Answers, display: DisplayUnits) -> Iterator[str]:
+    if answers.stages:
+        yield f"{'Level':>12}{'Surface':>14}{'Volume':>14}{'Outflow':>14}   its range"
+    for stage in answers.stages:
+        cells = (
+            display.text(stage.level, "level"),
+            display.text(stage.area, "area"),
+            display.text(stage.volume, "volume"),
+            display.text(stage.outflow.typical or 0.0, "flow"),
+        )
+        yield f"{cells[0]:>12}{cells[1]:>14}{cells[2]:>14}{cells[3]:>14}   {_range(stage.outflow, 'flow', display)}"
 
 
 def _coefficients(answers: Answers, display: DisplayUnits) -> Iterator[str]:

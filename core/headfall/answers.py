@@ -63,8 +63,12 @@ class Equilibrium:
     needed_level: float | None
     """The level [m] at which the outlets would pass the inflow, also where it lies above the vessel's top."""
     largest_inflow: Figure
-    """The inflow whose equilibrium stands at overflow [m³/s]."""
+    """The inflow whose equilibrium stands at overflow with the drains alone [m³/s]."""
     time_to_98_percent: float | None
+    surges_at: float | None = None
+    """The inlet level [m] about which the level surges, where a line that flows full takes more than comes in."""
+    surging_flow: float | None = None
+    """What all outlets pass with that inlet just covered [m³/s]."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -79,11 +83,15 @@ class Peak:
 
 @dataclass(frozen=True, slots=True)
 class Neighbour:
-    """A listed size and the drain time it achieves (None where it does not reach the stop)."""
+    """A listed size and what it achieves: a time [s], a level [m] or a flow [m³/s], by the target; None for never.
+
+    ``meets`` says whether it meets the target over the whole range.
+    """
 
     standard: str
     diameter: float
-    achieved_time: Figure
+    achieved: Figure
+    meets: bool
 
 
 @dataclass(frozen=True, slots=True)
@@ -91,13 +99,14 @@ class Sizing:
     """The size of the first drain that meets the target. ``reason`` is filled where there is none."""
 
     target: str
+    """``drain_time``, ``highest_level`` or ``flow_at``."""
     outlet: str
     diameter: Figure
     """[m]; ``low`` is the size for the high coefficient. None for a rectangle."""
     scale: float | None
     """Factor on the opening's present sizes, typical coefficient."""
     standard: str
-    """The smallest listed size that meets the target over the whole range; empty where none is listed."""
+    """The smallest listed size that meets the target over the whole range (the largest for ``flow_at``), or empty."""
     standard_diameter: float | None
     neighbours: tuple[Neighbour, ...]
     reason: str
@@ -117,13 +126,74 @@ class CoefficientUsed:
 @dataclass(frozen=True, slots=True)
 class Curve:
     """A run as arrays of one length, times strictly rising: s, m, m³, m³/s. ``ends`` says at what it ends:
-    ``stop``, ``overflow``, ``settled``, or ``at rest`` (the level never moves)."""
+    ``stop``, ``overflow``, ``settled``, ``surging`` or ``at rest`` (the level never moves)."""
 
     time: Array
     level: Array
     volume: Array
     outflow: Array
     ends: str
+
+
+@dataclass(frozen=True, slots=True)
+class DoubtfulPart:
+    """Levels from ``low`` to ``high`` [m] of the run over which an outlet's law is not to be believed.
+
+    ``why`` is ``dip``, or as for ``headfall.outlet.outlet.DoubtfulSpan``.
+    """
+
+    outlet: str
+    low: float
+    high: float
+    why: str
+
+
+@dataclass(frozen=True, slots=True)
+class HeadspaceRun:
+    """The gauge pressure of a headspace that is not open [Pa] along the typical curve, and its lowest point."""
+
+    pressure: Array
+    lowest: float
+    lowest_level: float
+    largest_air_flow: float
+    """The largest flow of air drawn in [m³/s]; nil where none can."""
+    lowest_if_fast: float
+    """The lowest pressure [Pa] where a closed gas exchanges no heat; the same as ``lowest`` else."""
+
+
+@dataclass(frozen=True, slots=True)
+class AtTime:
+    """The typical run at a chosen time [s]; level [m], volume [m³] and outflow [m³/s] are None after its end."""
+
+    time: float
+    level: float | None
+    volume: float | None
+    outflow: float | None
+
+
+@dataclass(frozen=True, slots=True)
+class Stage:
+    """Surface [m²], volume [m³] and outflow [m³/s] of a level [m] that stands still."""
+
+    level: float
+    area: float
+    volume: float
+    outflow: Figure
+
+
+@dataclass(frozen=True, slots=True)
+class AtTemperature:
+    """The run at another temperature [K]: density [kg/m³], viscosity [Pa·s] and time [s].
+
+    ``reynolds_first`` and ``reynolds_last`` [-] are the first outlet's at the start and at the end of the run.
+    """
+
+    temperature: float
+    density: float
+    viscosity: float
+    time: Figure
+    reynolds_first: float
+    reynolds_last: float
 
 
 @dataclass(frozen=True, slots=True)
@@ -146,6 +216,13 @@ class Answers:
     curve: Curve
     curve_low: Curve
     curve_high: Curve
+    doubtful: tuple[DoubtfulPart, ...] = ()
+    headspace: HeadspaceRun | None = None
+    receiver_level: float | None = None
+    """The level [m above the vessel's datum] of a receiving vessel at the end of the typical run."""
+    at_times: tuple[AtTime, ...] = ()
+    stages: tuple[Stage, ...] = ()
+    at_temperatures: tuple[AtTemperature, ...] = ()
 
     def as_dict(self) -> dict[str, Any]:
         """Return what ``figures --json`` prints: SI floats, the unit in the key, None where there is no answer."""

@@ -44,12 +44,51 @@ def as_dict(answers: Answers) -> dict[str, Any]:
             for finding in answers.findings
         ],
         "field_tests": [],
+        **_beside(answers),
         "curve": {
             "time_s": curve.time.tolist(),
             "level_m": curve.level.tolist(),
             "volume_m3": curve.volume.tolist(),
             "outflow_m3_s": curve.outflow.tolist(),
         },
+    }
+
+
+def _beside(answers: Answers) -> dict[str, Any]:
+    """What stands beside the run: doubtful parts, headspace, receiver, tables."""
+    return {
+        "doubtful": [
+            {"outlet": part.outlet, "from_level_m": part.low, "to_level_m": part.high, "why": part.why}
+            for part in answers.doubtful
+        ],
+        "headspace": _headspace(answers),
+        "receiver": {"level_m": answers.receiver_level},
+        "at_times": [
+            {"time_s": row.time, "level_m": row.level, "volume_m3": row.volume, "outflow_m3_s": row.outflow}
+            for row in answers.at_times
+        ],
+        "stages": [
+            {
+                "level_m": row.level,
+                "area_m2": row.area,
+                "volume_m3": row.volume,
+                "outflow_m3_s": row.outflow.typical,
+                "outflow_low_m3_s": row.outflow.low,
+                "outflow_high_m3_s": row.outflow.high,
+            }
+            for row in answers.stages
+        ],
+        "at_temperatures": [
+            {
+                "temperature_K": row.temperature,
+                "density_kg_m3": row.density,
+                "viscosity_Pa_s": row.viscosity,
+                **_figure("time", "s", row.time),
+                "reynolds_first": row.reynolds_first,
+                "reynolds_last": row.reynolds_last,
+            }
+            for row in answers.at_temperatures
+        ],
     }
 
 
@@ -75,7 +114,27 @@ def _equilibrium(answers: Answers) -> dict[str, Any]:
         "largest_inflow_m3_s": rest.largest_inflow.typical,
         "largest_inflow_low_m3_s": rest.largest_inflow.low,
         "time_to_98_percent_s": rest.time_to_98_percent,
+        "surges_at_m": rest.surges_at,
+        "surging_flow_m3_s": rest.surging_flow,
     }
+
+
+def _headspace(answers: Answers) -> dict[str, Any]:
+    run = answers.headspace
+    if run is None:
+        return {"lowest_gauge_pressure_Pa": 0.0, "lowest_gauge_pressure_fast_Pa": 0.0, "at_level_m": None}
+    return {
+        "lowest_gauge_pressure_Pa": run.lowest,
+        "lowest_gauge_pressure_fast_Pa": run.lowest_if_fast,
+        "at_level_m": run.lowest_level,
+    }
+
+
+_ACHIEVED = {
+    "drain_time": ("achieved_time", "s"),
+    "highest_level": ("achieved_level", "m"),
+    "flow_at": ("achieved_flow", "m3_s"),
+}
 
 
 def _sizing(sizing: Sizing) -> dict[str, Any]:
@@ -90,7 +149,8 @@ def _sizing(sizing: Sizing) -> dict[str, Any]:
             {
                 "standard": neighbour.standard,
                 "diameter_m": neighbour.diameter,
-                **_figure("achieved_time", "s", neighbour.achieved_time),
+                **_figure(*_ACHIEVED[sizing.target], neighbour.achieved),
+                "meets_target": neighbour.meets,
             }
             for neighbour in sizing.neighbours
         ],

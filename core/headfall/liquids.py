@@ -11,13 +11,16 @@ from headfall.resources import read_resource
 
 @dataclass(frozen=True, slots=True)
 class LiquidState:
-    """A liquid at one temperature: [K], [kg/m³], [Pa·s], [Pa]; ``source`` is a key of the list of sources."""
+    """A liquid at one temperature: [K], [kg/m³], [Pa·s], [Pa]; ``source`` is a key of the list of sources.
+
+    ``vapour_pressure`` is None where it is not known.
+    """
 
     name: str
     temperature: float
     density: float
     viscosity: float
-    vapour_pressure: float
+    vapour_pressure: float | None
     source: str
 
 
@@ -39,12 +42,90 @@ class TemperatureFault(ValueError):
     @property
     def wanted(self) -> str:
         """What is wanted, as the end of a sentence."""
+        if self.low == self.high:
+            return f"a temperature of {_celsius(self.low)}"
         return f"a temperature from {_celsius(self.low)} to {_celsius(self.high)}"
 
     @property
     def sentence(self) -> str:
         """What was found and what to type, for the person who typed it."""
         return f"{self.found[0].upper()}{self.found[1:]}. Type {self.wanted}."
+
+
+@dataclass(frozen=True, slots=True)
+class CardRow:
+    """Density [kg/m³], viscosity [Pa·s] and, if known, vapour pressure [Pa] at a temperature [K]."""
+
+    temperature: float
+    density: float
+    viscosity: float
+    vapour_pressure: float | None = None
+
+
+@dataclass(frozen=True, slots=True)
+class LiquidCard:
+    """A liquid by rows of its properties, temperatures rising.
+
+    Between the rows density is linear in temperature, the logarithms of viscosity and vapour pressure are linear in
+    1/T (source ``andrade_1930`` for viscosity); at the rows all are exact. Nothing is extrapolated.
+    ``any_temperature`` says that a single row counts at every temperature.
+    """
+
+    name: str
+    rows: tuple[CardRow, ...]
+    source: str
+    any_temperature: bool = False
+
+    @classmethod
+    def single(cls, name: str, density: float, viscosity: float, vapour_pressure: float | None) -> LiquidCard:
+        """Return the card of a liquid of one's own with one density [kg/m³] and viscosity [Pa·s]."""
+        return cls(name, (CardRow(293.15, density, viscosity, vapour_pressure),), "own_liquid", True)
+
+    def at(self, temperature: float) -> LiquidState:
+        """Return the liquid at a temperature [K]; raises TemperatureFault outside the rows."""
+        rows, first, last = self.rows, self.rows[0], self.rows[-1]
+        if self.any_temperature:
+            return self._state(temperature, first.density, first.viscosity, first.vapour_pressure)
+        slack = 1e-9 * last.temperature
+        if not first.temperature - slack <= temperature <= last.temperature + slack:
+            raise TemperatureFault(self.name, temperature, first.temperature, last.temperature)
+        place = next((index for index, row in enumerate(rows) if row.temperature >= temperature - slack), 0)
+        above = rows[place]
+        if place == 0 or abs(above.temperature - temperature) <= slack:
+            return self._state(temperature, above.density, above.viscosity, above.vapour_pressure)
+        below = rows[place - 1]
+        share = (temperature - below.temperature) / (above.temperature - below.temperature)
+        inverse = (1 / below.temperature - 1 / temperature) / (1 / below.temperature - 1 / above.temperature)
+        vapour = None
+        if below.vapour_pressure and above.vapour_pressure:
+            vapour = below.vapour_pressure * (above.vapour_pressure / below.vapour_pressure) ** inverse
+        density = below.density + share * (above.density - below.density)
+        return self._state(
+            temperature, density, below.viscosity * (above.viscosity / below.viscosity) ** inverse, vapour
+        )
+
+    def _state(self, temperature: float, density: float, viscosity: float, vapour: float | None) -> LiquidState:
+        return LiquidState(self.name, temperature, density, viscosity, vapour, self.source)
+
+
+def built_in_liquids() -> tuple[str, ...]:
+    """Return the names of the liquids whose properties are built in, water first."""
+    return ("water", *read_resource("liquids.json"))
+
+
+def liquid_named(name: str, temperature: float) -> LiquidState:
+    """Return a built-in liquid at the temperature [K].
+
+    Raises KeyError for a name that is not built in and TemperatureFault outside the range of its rows.
+    """
+    if name == "water":
+        return water(temperature)
+    data = read_resource("liquids.json")[name]
+    rows = tuple(
+        CardRow(celsius + 273.15, density, millipascal * 1e-3, None if kilopascal is None else kilopascal * 1e3)
+        for celsius, density, millipascal, kilopascal in data["rows"]
+    )
+    return LiquidCard(name, rows, data["source"]).at(temperature)
 
 
 def water(temperature: float) -> LiquidState:

@@ -233,7 +233,7 @@ def test_another_shape_keeps_what_still_applies(panel: EntryPanel, document: Doc
     choose(panel, ("vessel",), "drum")
     assert isinstance(document.case.vessel, Drum)
     assert document.case.vessel.diameter.text == "2400 mm"
-    assert labels(panel, "vessel") == ["Shape", "Diameter", "Length", "Heads"]
+    assert labels(panel, "vessel") == ["Shape", "Diameter", "Length", "Heads", "Fall"]
     assert "From low end" in labels(panel, "outlets.0")
     assert document.undo_stack.count() == 1
     document.undo_stack.undo()
@@ -250,7 +250,7 @@ def test_two_different_heads(panel: EntryPanel, document: Document) -> None:
     choose(panel, ("vessel",), "drum")
     choose(panel, ("vessel", "heads"), "two")
     choose(panel, ("vessel", "heads", 1), "torispherical")
-    assert labels(panel, "vessel")[3:] == ["Heads", "Low end", "High end", "Crown ÷ Ø", "Knuckle ÷ Ø"]
+    assert labels(panel, "vessel")[3:] == ["Heads", "Low end", "High end", "Crown ÷ Ø", "Knuckle ÷ Ø", "Fall"]
     forms = [end.form for end in document.case.vessel.heads]
     assert forms[1] == "torispherical"
     ratio = field(panel, "vessel", "heads", 1, "knuckle_ratio")

@@ -95,9 +95,11 @@ def test_a_field_that_is_only_pointed_at_has_no_ring(panel: EntryPanel, document
 
 
 def test_tabbing_to_a_link_takes_the_ring_along(panel: EntryPanel, document: Document) -> None:
-    QTest.mouseClick(line(panel, ("liquid", "temperature")), Qt.MouseButton.LeftButton)
     former = line(panel, ("liquid", "temperature"))
-    QTest.keyClick(former, Qt.Key.Key_Tab)
+    QTest.mouseClick(former, Qt.MouseButton.LeftButton)
+    while isinstance(QApplication.focusWidget(), QLineEdit):
+        former = QApplication.focusWidget()
+        QTest.keyClick(former, Qt.Key.Key_Tab)
     link = QApplication.focusWidget()
     assert isinstance(link, QPushButton)
     assert link.accessibleName() == "Add an outlet after outlet 1"

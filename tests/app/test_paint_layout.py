@@ -19,12 +19,13 @@ from headfall.files import case_from_text
 from headfall.quantities import display_units
 from headfall.study import solve
 from headfall_app.paint import jets, lettering
-from headfall_app.paint.curve import curve_points, not_defended_box, remark_box
+from headfall_app.paint.curve import curve_points, remark_box
 from headfall_app.paint.cut import Across, shown_stretches
 from headfall_app.paint.flags import GAP, TALL, placed_flags, spread
 from headfall_app.paint.flow import word_boxes
 from headfall_app.paint.jets import jet_places, paint_jets
 from headfall_app.paint.layout import arrange
+from headfall_app.paint.loose import placed_words
 from headfall_app.paint.scene import Scene, scene_of
 from headfall_app.paint.section import wall_shape
 from headfall_app.paint.staff import numbers_left, staff_numbers
@@ -185,13 +186,16 @@ def test_words_in_the_plot_keep_clear_of_one_another_and_of_the_curve(size: tupl
     )
     shown = scene_of(solve(case), display_units("metric"), now=60.0)
     frame = arrange(*size, shown)
-    remark, words = remark_box(frame, shown), not_defended_box(frame, shown)
-    assert not remark.isNull() and not words.isNull()
-    assert not remark.intersects(words)
+    placed = placed_words(frame, shown)
+    assert placed and all(clear for _, _, clear in placed)
+    taken = [box for _, box, _ in placed]
+    remark = remark_box(frame, shown, taken)
+    assert not remark.isNull()
+    for box in taken:
+        assert not remark.intersects(box)
     for x, y in zip(*curve_points(frame, shown.curve), strict=True):
-        assert not remark.contains(x, y)
-        assert not words.contains(x, y)
-    assert shown.not_defended_text.startswith("not to be relied on below ")
+        assert not any(box.contains(x, y) for box in (remark, *taken))
+    assert placed[0][0].text.startswith("not to be relied on ")
 
 
 def test_several_outlets_at_one_place_stand_beside_one_another(application: QApplication) -> None:

@@ -119,7 +119,7 @@ def test_one_of_several_outlets_is_named_by_its_number(tank: Case) -> None:
         (("inflow",), "the inflow"),
         (("outlets", 0), "the outlet"),
         (("headspace",), "the headspace"),
-        (("target", "drain_time"), "the drain time"),
+        (("target", "drain_time"), "the target's drain time"),
         (("title",), "the title"),
     ],
 )

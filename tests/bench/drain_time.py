@@ -116,7 +116,7 @@ def _by_quadrature(problem: Problem) -> float:
     edges = np.array(cut_span(problem.start, problem.stop, [*problem.profile.breakpoints, 0.0], poles))
 
     def net_outflow(level: Any) -> Any:
-        return OUTLET.flow(level, COEFFICIENT) - problem.inflow
+        return OUTLET.flow(level, np.array([COEFFICIENT])) - problem.inflow
 
     return float(run_time(edges, problem.profile.plan_area, net_outflow))
 

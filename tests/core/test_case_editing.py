@@ -261,8 +261,8 @@ def test_an_opening_changes_its_form() -> None:
 
 
 def test_a_shape_that_is_not_known_is_a_lookup_error() -> None:
-    with pytest.raises(LookupError, match="basin is not one of"):
-        change_shape(CASE, "basin")
+    with pytest.raises(LookupError, match="pyramid is not one of"):
+        change_shape(CASE, "pyramid")
 
 
 def test_the_former_case_stays_as_it_was() -> None:

@@ -12,6 +12,8 @@ from headfall.case.model import CoefficientRange, ConeEnd, Drum, FlatEnd, Levels
 from headfall.case.reading import build_case, read_case_data, read_parts
 
 LENGTH = "a length, such as 80 mm or 3 1/8 in"
+LEVEL = "a level, such as 2.8 m, 80 %, 15 m³ or 53.1 m site"
+SHAPES = "upright_cylinder, box, cone, drum, sphere, basin, table or stack"
 SOUND: dict[str, Any] = {
     "headfall": 1,
     "vessel": {"shape": "upright_cylinder", "diameter": "2.4 m", "height": "3 m"},
@@ -77,7 +79,7 @@ def test_the_sound_case_has_no_fault_and_takes_nothing_for_granted() -> None:
         (
             "levels.stop",
             "-1 in",
-            "levels.stop: -1 in is negative. Type a length of nil or more, such as 80 mm or 3 1/8 in.",
+            "levels.stop: -1 in is negative. Type a level of nil or more, such as 2.8 m, 80 %, 15 m³ or 53.1 m site.",
         ),
         ("vessel.diameter", ABSENT, f"vessel.diameter: This is missing. Type {LENGTH}."),
         ("inflow.rate", "3 m", "inflow.rate: 3 m is a length. Type a flow, such as 12 L/min or 40 US gal/min."),
@@ -131,34 +133,38 @@ def test_the_sound_case_has_no_fault_and_takes_nothing_for_granted() -> None:
         (
             "vessel.shape",
             ABSENT,
-            "vessel.shape: The shape is missing. Type upright_cylinder, box, cone, drum or sphere.",
+            f"vessel.shape: The shape is missing. Type {SHAPES}.",
         ),
         (
             "vessel.shape",
             "pyramid",
-            'vessel.shape: "pyramid" is not a vessel shape known here. '
-            "Type upright_cylinder, box, cone, drum or sphere.",
+            f'vessel.shape: "pyramid" is not a vessel shape known here. Type {SHAPES}.',
         ),
-        ("vessel.shape", 3, "vessel.shape: 3 is not text. Type upright_cylinder, box, cone, drum or sphere."),
+        ("vessel.shape", 3, f"vessel.shape: 3 is not text. Type {SHAPES}."),
         (
             "vessel.floor",
             {"form": "dished"},
             'vessel.floor.form: "dished" is not a floor form known here. '
-            "Type flat, cone, ellipsoidal, torispherical or hemispherical.",
+            "Type flat, cone, ellipsoidal, torispherical, hemispherical or sloped.",
         ),
         (
             "outlets.0.opening.form",
             "oval",
             'outlets[0].opening.form: "oval" is not an opening form known here. Type round or rectangle.',
         ),
-        ("outlets.0.kind", "siphon", 'outlets[0].kind: "siphon" is not a kind of outlet known here. Type orifice.'),
+        (
+            "outlets.0.kind",
+            "siphon",
+            'outlets[0].kind: "siphon" is not a kind of outlet known here. Type orifice, pipe or weir.',
+        ),
         ("inflow.kind", "tidal", 'inflow.kind: "tidal" is not a kind of inflow known here. Type steady.'),
-        ("headspace", {}, "headspace.kind: The kind is missing. Type open."),
+        ("headspace", {}, "headspace.kind: The kind is missing. Type open, pressurised, closed or vented."),
         ("vessel.diametre", "2 m", 'vessel.diametre: "diametre" is not a key known here. Did you mean diameter?'),
         (
             "levels.zzz",
             "2 m",
-            'levels.zzz: "zzz" is not a key known here. The keys known here are start, stop, overflow and high.',
+            'levels.zzz: "zzz" is not a key known here. The keys known here are start, stop, overflow, high, '
+            "site_datum and shown.",
         ),
         (
             "headspace",
@@ -253,7 +259,7 @@ def test_the_sound_case_has_no_fault_and_takes_nothing_for_granted() -> None:
             "levels.start: The start level 2.8 m stands above the overflow level 2.7 m. "
             "Type a level not above the overflow.",
         ),
-        ("levels.stop", ABSENT, f"levels.stop: This is missing. Type {LENGTH}."),
+        ("levels.stop", ABSENT, f"levels.stop: This is missing. Type {LEVEL}."),
         # The format number
         (
             "headfall",

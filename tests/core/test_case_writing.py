@@ -34,8 +34,12 @@ FULL: dict[str, Any] = {
             {"form": "torispherical", "crown_ratio": 1.0, "knuckle_ratio": 0.1},
         ],
         "fall": "0 m",
+        "sizes": "outside",
+        "wall": "6 mm",
+        "lining": "0 mm",
+        "displacement": [{"from": "0 m", "to": "1 m", "volume": "20 L"}],
     },
-    "liquid": {"name": "water", "temperature": "15 degC"},
+    "liquid": {"name": "water", "temperature": "15 degC", "also_at": ["5 degC", "40 degC"]},
     "outlets": [
         {
             "name": "drain",
@@ -50,12 +54,31 @@ FULL: dict[str, Any] = {
             "count": 2,
             "role": "drain",
             "blocked": 0,
-        }
+            "tailwater": "-1 m",
+        },
+        {
+            "name": "line",
+            "kind": "pipe",
+            "entry_loss": {"low": 0.4, "typical": 0.5, "high": 0.6},
+            "bore": "NPS 4 sch 40",
+            "length": "6 m",
+            "material": "commercial steel",
+            "fittings": [{"name": "bend", "loss": 0.3, "laminar_loss": 800, "count": 2}],
+            "valve": {"kv": 40, "opening": 0.5, "characteristic": "linear"},
+            "sections": [{"bore": "50 mm", "length": "1 m", "roughness": "0.05 mm"}],
+            "discharge_elevation": "-2 m",
+        },
+        {"name": "lip", "kind": "weir", "form": "vnotch", "angle": "90°", "crest": "2 m", "role": "overflow"},
     ],
     "inflow": {"kind": "steady", "rate": "12 L/min"},
     "headspace": {"kind": "open"},
-    "levels": {"start": "2.2 m", "stop": "0.1 m", "overflow": "2.3 m", "high": "2.25 m"},
-    "target": {"drain_time": "1:23:45"},
+    "levels": {"start": "2.2 m", "stop": "0.1 m", "overflow": "2.3 m", "high": "2.25 m", "site_datum": "51 m"},
+    "target": {
+        "drain_time": "1:23:45",
+        "highest_level": "90 %",
+        "flow_at": {"level": "10 m³", "flow": "3 L/s"},
+    },
+    "tables": {"times": ["10 min", "1 h"], "level_step": "0.1 m"},
     "structure": {
         "shell_thickness": "6 mm",
         "allowable_stress": "90 MPa",
@@ -94,4 +117,14 @@ def test_an_example_is_written_just_as_it_lies_there(path: Path) -> None:
 
 
 def test_the_examples_are_there() -> None:
-    assert [path.stem for path in EXAMPLES] == ["day_tank_us", "header_tank", "rinse_drum"]
+    assert {path.stem for path in EXAMPLES} >= {"day_tank_us", "header_tank", "rinse_drum"}
+
+
+def test_a_row_stands_on_one_line() -> None:
+    rows = [["0 m", "60 m²"], ["1 m", "80 m²"]]
+    data = {**FULL, "vessel": {"shape": "table", "column": "area", "rows": rows}, "tables": {"times": ["1 h"]}}
+    text = case_text(read_case_data(data))
+    assert '    "rows": [\n      ["0 m", "60 m²"],\n      ["1 m", "80 m²"]\n    ]\n' in text
+    assert '  "tables": {\n    "times": ["1 h"]\n  },\n' in text
+    assert '  "field_tests": []\n' in text
+    assert json.loads(text) == data

@@ -1,4 +1,4 @@
-"""Checks of the run: standing level, overflow, alarm level, venting, scope, order."""
+"""Checks of the run: standing level and surging."""
 
 from __future__ import annotations
 
@@ -7,16 +7,7 @@ from typing import Any
 import pytest
 
 from headfall.answers import Figure
-from headfall.checks import (
-    Finding,
-    Grade,
-    check_alarm_level,
-    check_overflow,
-    check_scope,
-    check_standing_level,
-    check_venting,
-    sorted_findings,
-)
+from headfall.checks import Finding, Grade, check_standing_level, check_surging
 from headfall.quantities import display_units
 
 METRIC = display_units("metric")
@@ -47,19 +38,6 @@ def standing(**changes: Any) -> Finding:
     assert finding.rule == "C11"
     assert finding.source == "volume_balance"
     return finding
-
-
-def overflowing(**changes: Any) -> list[Finding]:
-    """The findings for an inflow that overflows, with some facts changed."""
-    facts: dict[str, Any] = {
-        "inflow": 0.020,
-        "largest_inflow": Figure(0.0189, 0.0183, 0.0195),
-        "overflow": 1.9,
-        "time_to_overflow": Figure(596.0, 414.0, 1089.0),
-        "room": 0.843,
-        "display": METRIC,
-    }
-    return check_overflow(**{**facts, **changes})
 
 
 def test_a_level_that_stands_above_the_stop_is_a_stop_with_its_range_and_its_volume() -> None:
@@ -97,6 +75,96 @@ def test_without_inflow_the_heel_is_named() -> None:
     assert "grows without bound" in finding.advice
 
 
+@pytest.mark.parametrize(
+    ("form", "edge", "advice"),
+    [
+        ("down", "the outlet's plane", "No outlet draws it."),
+        ("pipe", "the pipe's inlet", "No outlet draws it."),
+        ("weir", "the crest", "Near the crest the flow dies away"),
+    ],
+)
+def test_the_heel_is_named_by_what_the_lowest_outlet_is(form: str, edge: str, advice: str) -> None:
+    rest = Figure(0.225, 0.225, 0.225)
+    finding = standing(settles_at=rest, settled_volume=0.5, inflow=0.0, heel=0.225, form=form)
+    assert plain(finding.text) == f"It never reaches 0.100 m: 0.500 m³ stays below {edge}, 0.225 m."
+    assert finding.advice.startswith(advice)
+
+
+def test_a_vacuum_or_a_liquid_outside_that_holds_the_level_is_named_and_no_edge_is() -> None:
+    rest: dict[str, Any] = {"settles_at": Figure(1.379, 1.379, 1.395), "settled_volume": 13.87, "inflow": 0.0}
+    vacuum = standing(**rest, held_by="vacuum")
+    assert plain(vacuum.text) == (
+        "It never reaches 0.100 m: the vacuum above the liquid holds it at 1.379 m, with 13.9 m³ still in the vessel."
+    )
+    assert vacuum.advice.startswith("Open a way in for air.")
+    outside = standing(**rest, held_by="tailwater")
+    assert plain(outside.text) == (
+        "It never reaches 0.100 m: the liquid outside holds it at 1.379 m, with 13.9 m³ still in the vessel."
+    )
+    kept = standing(**rest, held_by="kept_vacuum")
+    assert kept.text == vacuum.text
+    assert kept.advice.startswith("Let the pressure above the liquid rise")
+    filling = standing(**rest, held_by="tailwater", start=1.0, stop=1.7)
+    assert plain(filling.text) == "It never fills to 1.700 m: the liquid outside holds it at 1.379 m."
+    with_inflow = standing(held_by="vacuum")
+    assert "it settles at 0.347 m" in plain(with_inflow.text)
+
+
+def test_a_vacuum_at_one_end_of_the_range_is_an_attention() -> None:
+    finding = standing(
+        reaches_stop=True,
+        time=Figure(120.0, 118.0, None),
+        settles_at=Figure(0.08, 0.08, 0.12),
+        inflow=0.0,
+        held_by="vacuum",
+    )
+    assert finding.grade is Grade.ATTENTION
+    assert plain(finding.text) == (
+        "At one end of the range it never reaches 0.100 m: the vacuum above the liquid holds it at 0.120 m."
+    )
+
+
+def test_a_level_that_surges_is_not_said_to_rise_to_overflow() -> None:
+    facts: dict[str, Any] = {"settles_at": NEVER, "settled_volume": None, "surges_at": 0.2, "surging_flow": 0.022}
+    finding = standing(**facts)
+    assert plain(finding.text) == (
+        "It never reaches 0.100 m: it surges about the inlet at 0.200 m, where 22.0 L/s goes out as soon as it is "
+        "covered and 8.00 L/s comes in."
+    )
+    assert (finding.value, finding.advice) == (0.2, "Shut the inflow to go lower.")
+    filling = standing(**facts, start=0.1, stop=1.7)
+    assert filling.text.startswith("It never fills to")
+    assert plain(filling.advice) == "Bring the inflow above 22.0 L/s, or throttle the outlet."
+
+
+def surging(**changes: Any) -> Finding:
+    """The finding for a full line that takes more than comes in, with some facts changed."""
+    facts: dict[str, Any] = {"inflow": 0.00417, "surges_at": 0.003, "full_flow": 0.0222, "display": METRIC}
+    (finding,) = check_surging(**{**facts, **changes})
+    assert finding.rule == "C12"
+    return finding
+
+
+def test_a_full_line_that_takes_more_than_comes_in_surges() -> None:
+    finding = surging()
+    assert finding.grade is Grade.ATTENTION
+    assert plain(finding.text) == (
+        "Expect surging and gulping about 0.003 m, not a steady level: 4.17 L/s comes in, and 22.2 L/s goes out as "
+        "soon as the inlet there is covered."
+    )
+
+
+def test_a_level_that_stands_and_a_run_without_inflow_do_not_surge() -> None:
+    stands = surging(surges_at=None, full_flow=None)
+    assert stands.grade is Grade.NO_CAUTION
+    assert plain(stands.text) == (
+        "No inlet takes more than comes in as soon as it is covered; no caution is raised by this check."
+    )
+    none = surging(surges_at=None, full_flow=None, inflow=0.0)
+    assert none.grade is Grade.NO_CAUTION
+    assert none.text == "Nothing flows in; no caution is raised by this check."
+
+
 def test_a_filling_that_stands_still_says_so_and_asks_for_more_than_the_highest_flow() -> None:
     finding = standing(start=0.1, stop=1.7)
     assert plain(finding.text) == "It never fills to 1.700 m: it settles at 0.347 m (0.325 to 0.371 m)."
@@ -122,75 +190,5 @@ def test_a_run_that_reaches_its_stop_raises_no_caution() -> None:
     assert "starts at its stop" in standing(start=0.1, reaches_stop=True, time=Figure(0.0, 0.0, 0.0)).text
 
 
-def test_overflow_is_a_stop_with_its_time_and_the_largest_inflow_as_its_limit() -> None:
-    (finding,) = overflowing()
-    assert finding.grade is Grade.STOP
-    assert plain(finding.text) == "With 20.0 L/s flowing in it overflows after 9 min 56 s (6 min 54 s to 18 min 09 s)."
-    assert (finding.value, finding.limit, finding.kind) == (0.020, 0.0183, "flow")
-    assert "18.3 L/s" in plain(finding.advice)
-
-
-@pytest.mark.parametrize(
-    ("changes", "words"),
-    [
-        ({"inflow": 0.0186, "time_to_overflow": Figure(None, 414.0, None)}, "could overflow, with the lowest"),
-        ({"inflow": 0.0186, "time_to_overflow": NEVER}, "could overflow: the outlets may hold no more than 18.3 L/s"),
-        ({"inflow": 0.020, "time_to_overflow": NEVER}, "would overflow if it ran on past its stop"),
-    ],
-)
-def test_what_could_overflow_is_an_attention(changes: dict[str, Any], words: str) -> None:
-    finding = overflowing(**changes)[0]
-    assert finding.grade is Grade.ATTENTION
-    assert words in plain(finding.text)
-
-
-def test_with_the_outlet_shut_the_time_to_overflow_is_noted() -> None:
-    held, note = overflowing(inflow=0.003, time_to_overflow=NEVER)
-    assert held.grade is Grade.NO_CAUTION
-    assert note.grade is Grade.NOTE
-    assert plain(note.text) == "If the outlet is shut, 3.00 L/s reaches overflow in 4 min 41 s."
-    assert note.value == pytest.approx(281.0)
-
-
-def test_with_nothing_flowing_in_no_caution_and_no_note() -> None:
-    (finding,) = overflowing(inflow=0.0, time_to_overflow=NEVER)
-    assert finding.grade is Grade.NO_CAUTION
-
-
-def test_the_limit_itself_is_not_exceeded() -> None:
-    assert overflowing(inflow=0.0183, time_to_overflow=NEVER)[0].grade is Grade.NO_CAUTION
-
-
-def test_the_alarm_level_is_compared_with_the_peak() -> None:
-    (above,) = check_alarm_level(peak=1.85, start=1.7, high=1.8, display=METRIC)
-    assert above.grade is Grade.ATTENTION
-    assert plain(above.text) == "The level rises to 1.850 m, above the alarm level of 1.800 m."
-    assert "starts at" in check_alarm_level(peak=1.85, start=1.85, high=1.8, display=METRIC)[0].text
-    assert check_alarm_level(peak=1.8, start=1.7, high=1.8, display=METRIC)[0].grade is Grade.NO_CAUTION
-    (unknown,) = check_alarm_level(peak=1.8, start=1.7, high=None, display=METRIC)
-    assert (unknown.grade, unknown.needs, unknown.place) == (Grade.NOT_CHECKED, "alarm level", "levels.high")
-
-
-def test_an_undeclared_headspace_is_a_stop_and_the_vent_is_never_checked() -> None:
-    undeclared, vent = check_venting(headspace_declared=False)
-    assert undeclared.grade is Grade.STOP
-    assert "It has not been said how air gets in" in undeclared.text
-    assert "such as ISO 28300" in undeclared.advice
-    assert (vent.grade, vent.needs) == (Grade.NOT_CHECKED, "vent size")
-    declared, vent = check_venting(headspace_declared=True)
-    assert declared.grade is Grade.NO_CAUTION
-    assert vent.grade is Grade.NOT_CHECKED
-
-
-def test_findings_are_sorted_worst_first_a_spill_before_other_stops_and_the_scope_last_among_the_notes() -> None:
-    note = overflowing(inflow=0.003, time_to_overflow=NEVER)[1]
-    findings = [*check_scope(), *check_venting(headspace_declared=False), note, standing(), *overflowing()]
-    ordered = sorted_findings(findings)
-    assert [finding.grade for finding in ordered] == sorted(finding.grade for finding in findings)
-    assert [finding.rule for finding in ordered if finding.grade is Grade.STOP] == ["C13", "C1", "C11"]
-    assert [finding.rule for finding in ordered if finding.grade is Grade.NOTE] == ["C13", "C0"]
-
-
 def test_the_sentences_follow_the_display_units() -> None:
     assert "ft" in standing(display=display_units("us")).text
-    assert "US gal/min" in plain(overflowing(display=display_units("us"))[0].text)

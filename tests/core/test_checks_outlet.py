@@ -10,7 +10,16 @@ import numpy as np
 import pytest
 from scipy.integrate import quad
 
-from headfall.checks import Finding, Grade, check_dip, check_heel, check_large_outlet, check_nominal_size, dip_level
+from headfall.checks import (
+    Finding,
+    Grade,
+    check_dip,
+    check_heel,
+    check_large_outlet,
+    check_nominal_size,
+    dip_level,
+    is_made_of_pipe,
+)
 from headfall.checks.large_outlet import time_excess
 from headfall.checks.nominal_size import nominal_size
 from headfall.quantities import display_units
@@ -53,16 +62,8 @@ def test_a_dip_that_reaches_beyond_the_top_is_the_top() -> None:
 
 def dip(lowest: float, facing: str = "down") -> Finding:
     """The dip finding of the 80 mm outlet."""
-    (finding,) = check_dip(
-        outlet="the outlet",
-        facing=facing,
-        elevation=0.0,
-        flow_at=orifice(STRENGTH_80),
-        lowest=lowest,
-        top=2.0,
-        gravity=G,
-        display=METRIC,
-    )
+    level = dip_level(orifice(STRENGTH_80), facing=facing, elevation=0.0, top=2.0, gravity=G)
+    (finding,) = check_dip(outlet="the outlet", level=level, lowest=lowest, tolerance=2e-9, display=METRIC)
     return finding
 
 
@@ -84,14 +85,18 @@ def test_a_run_above_the_dip_raises_no_caution_and_a_side_opening_dips_deeper() 
 
 
 def test_an_upper_outlet_that_runs_dry_over_a_lower_one_is_an_attention() -> None:
-    facts: dict[str, Any] = {"outlet": "side draw", "facing": "side", "elevation": 0.9, "top": 2.0, "gravity": G}
-    upper = orifice(STRENGTH_80, 0.9)
-    (passed,) = check_dip(**facts, flow_at=upper, lowest=0.1, display=METRIC, others_go_on=True)
+    facts: dict[str, Any] = {"outlet": "side draw", "level": 1.02, "tolerance": 2e-9, "display": METRIC}
+    (passed,) = check_dip(**facts, lowest=0.1, runs_dry=True)
     assert passed.grade is Grade.ATTENTION
-    assert "down until side draw runs dry" in passed.text
-    (alone,) = check_dip(**facts, flow_at=upper, lowest=0.1, display=METRIC)
-    (wet,) = check_dip(**facts, flow_at=upper, lowest=0.92, display=METRIC, others_go_on=True)
-    assert alone.grade is wet.grade is Grade.STOP
+    assert plain(passed.text) == "From 1.020 m down until side draw runs dry, air may be drawn into it."
+    (wet,) = check_dip(**facts, lowest=0.92)
+    assert wet.grade is Grade.STOP
+
+
+def test_a_run_that_ends_at_the_dip_is_defended() -> None:
+    facts: dict[str, Any] = {"outlet": "the outlet", "level": 0.1, "tolerance": 2e-9, "display": METRIC}
+    assert check_dip(**facts, lowest=0.1 - 1e-9)[0].grade is Grade.NO_CAUTION
+    assert check_dip(**facts, lowest=0.1 - 1e-8)[0].grade is Grade.STOP
 
 
 def large(contracted: float, surface: Any, time: Any, level: Any | None = None) -> Finding:
@@ -153,21 +158,44 @@ def test_the_excess_is_that_of_a_cylinder_started_from_rest(ratio: float) -> Non
     assert float(time_excess(np.array(ratio))) == pytest.approx(plain_law / true - 1.0, abs=5e-4)
 
 
+def nominal(**changes: Any) -> Finding:
+    """The finding for an 80 mm tube, with some facts changed."""
+    facts: dict[str, Any] = {
+        "outlet": "the outlet",
+        "made_of_pipe": True,
+        "diameter": 0.08,
+        "display": METRIC,
+        "place": "outlets[0].opening.diameter",
+    }
+    (finding,) = check_nominal_size(**{**facts, **changes})
+    assert finding.rule == "C28"
+    return finding
+
+
 @pytest.mark.parametrize(
     ("entry", "grade"), [("sharp_edged", Grade.NOTE), ("short_tube", Grade.ATTENTION), ("bellmouth", Grade.ATTENTION)]
 )
 def test_a_nominal_size_is_an_attention_where_pipe_is_used(entry: str, grade: Grade) -> None:
-    (finding,) = check_nominal_size(
-        outlet="the outlet", entry=entry, diameter=0.08, display=METRIC, place="outlets[0].opening.diameter"
-    )
+    finding = nominal(made_of_pipe=is_made_of_pipe(entry))
     assert finding.grade is grade
     assert plain(finding.text) == "80 mm is also a nominal size: a DN 80 pipe is 77.9 mm inside in schedule 40."
 
 
-def test_the_article_fits_the_name() -> None:
-    (finding,) = check_nominal_size(
-        outlet="the outlet", entry="short_tube", diameter=0.0635, display=display_units("us"), place="x"
+def test_a_bore_typed_by_its_listed_name_never_raises_a_caution() -> None:
+    # DN 100 of another list may well be 100.0 mm inside.
+    by_name = nominal(outlet="dump line", diameter=0.1, listed="DN 100 SDR 11")
+    assert by_name.grade is Grade.NO_CAUTION
+    assert plain(by_name.text) == (
+        "DN 100 SDR 11 is typed for dump line, 100 mm inside; no caution is raised by this check."
     )
+    by_figure = nominal(outlet="dump line", diameter=0.1)
+    assert by_figure.grade is Grade.ATTENTION
+    assert plain(by_figure.text) == "100 mm is also a nominal size: a DN 100 pipe is 102 mm inside in schedule 40."
+    assert by_figure.advice.startswith("Enter the measured inside diameter of dump line")
+
+
+def test_the_article_fits_the_name() -> None:
+    finding = nominal(diameter=0.0635, display=display_units("us"))
     assert (
         plain(finding.text) == "2 1/2 in is also a nominal size: an NPS 2 1/2 pipe is 2.468 in inside in schedule 40."
     )
@@ -180,9 +208,7 @@ def test_nominal_sizes_in_inches_and_sizes_that_are_none() -> None:
     assert nominal_size(0.081) is None
     assert nominal_size(0.0779) is None
     for diameter in (None, 0.081):
-        facts: dict[str, Any] = {"outlet": "the outlet", "entry": "short_tube", "place": "outlets[0].opening.diameter"}
-        (finding,) = check_nominal_size(**facts, diameter=diameter, display=METRIC)
-        assert finding.grade is Grade.NO_CAUTION
+        assert nominal(diameter=diameter).grade is Grade.NO_CAUTION
 
 
 def test_the_pipe_table_rises_and_its_bores_are_near_their_names() -> None:
@@ -194,7 +220,7 @@ def test_the_pipe_table_rises_and_its_bores_are_near_their_names() -> None:
 
 def heel(**changes: Any) -> Finding:
     """The heel finding of a side opening, with some facts changed."""
-    facts: dict[str, Any] = {"level": 0.225, "volume": 0.5, "facing": "side", "start": 1.7, "stop": 0.1}
+    facts: dict[str, Any] = {"level": 0.225, "volume": 0.5, "form": "side", "start": 1.7, "stop": 0.1}
     (finding,) = check_heel(**{**facts, **changes}, display=METRIC, place="outlets[0].elevation")
     return finding
 
@@ -204,7 +230,10 @@ def test_what_stays_below_the_lowest_outlet_is_an_attention() -> None:
     assert finding.grade is Grade.ATTENTION
     assert plain(finding.text) == "0.500 m³ stays below the outlet's lower edge, 0.225 m."
     assert "another way" in finding.advice
-    assert "the outlet's plane" in heel(facing="down").text
+    assert "stays below the outlet's plane," in heel(form="down").text
+    assert "stays below the pipe's inlet," in heel(form="pipe").text
+    assert "stays below the pipe's discharging end," in heel(form="rising_pipe").text
+    assert "stays below the crest," in heel(form="weir").text
 
 
 def test_a_stop_above_the_heel_makes_it_a_note_and_no_heel_raises_no_caution() -> None:

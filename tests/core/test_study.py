@@ -140,9 +140,9 @@ def test_size_for_a_drain_time_with_its_neighbours() -> None:
     assert sizing.diameter.typical == pytest.approx(exact, rel=1e-9)
     assert sizing.diameter.low == pytest.approx(exact * math.sqrt(0.61 / 0.63), rel=1e-9)
     assert [neighbour.diameter for neighbour in sizing.neighbours] == pytest.approx([0.063, 0.071])
-    assert sizing.neighbours[1].achieved_time.typical == pytest.approx(by_hand(2.8, 0.1, 0.61, 0.071), rel=1e-9)
+    assert sizing.neighbours[1].achieved.typical == pytest.approx(by_hand(2.8, 0.1, 0.61, 0.071), rel=1e-9)
     assert sizing.standard == "plate opening 71 mm"
-    assert all((neighbour.achieved_time.high or 0) > 0 for neighbour in sizing.neighbours)
+    assert all((neighbour.achieved.high or 0) > 0 for neighbour in sizing.neighbours)
 
 
 def test_no_size_for_a_filling() -> None:

@@ -60,7 +60,7 @@ def test_a_station_belongs_to_a_drum() -> None:
 def test_water_out_of_range() -> None:
     (line,) = lines(liquid={"temperature": "140 degC"})
     assert line == (
-        "liquid.temperature: Water at 140 degC is outside the built-in range. Type a temperature from 0 to 100 °C."
+        "liquid.temperature: Water at 140 degC is outside the built-in range. Type a temperature from 0 °C to 100 °C."
     )
 
 

@@ -11,98 +11,33 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from headfall.case.attributes import attributes_of
-from headfall.case.editing import change_end_form, change_opening_form, change_shape, replace_at, value_at
+from headfall.case.editing import (
+    change_end_form,
+    change_flow_limit,
+    change_headspace,
+    change_liquid,
+    change_opening_form,
+    change_outlet_kind,
+    change_shape,
+    change_tailwater,
+    change_weir_form,
+    insert_part,
+    remove_part,
+    replace_at,
+    value_at,
+)
 from headfall.case.faults import CaseError
 from headfall.case.file_text import data_from_bytes, data_from_text
 from headfall.case.model import Case, Path
 from headfall.case.reading import read_case_data, read_parts
 from headfall.case.writing import case_as_data, case_text
 from headfall.files import case_from_text, fingerprint
+from tests.properties.typed_cases import CASES, JUNK
 
-SHAPES = ("upright_cylinder", "box", "cone", "drum", "sphere")
-
-
-def quantities(units: list[str], low: float = 0.1, high: float = 50) -> st.SearchStrategy[str]:
-    numbers = st.floats(low, high).map(lambda value: f"{value:.4g}") | st.sampled_from(["1/2", "3 1/8", "2,5", "7"])
-    return st.builds(
-        lambda number, gap, unit: f"{number}{gap}{unit}", numbers, st.sampled_from([" ", "  "]), st.sampled_from(units)
-    )
-
-
-LENGTHS = quantities(["m", "mm", "ft", "in", "cm"])
-TEXTS = st.text(st.characters(exclude_categories=["Cs"]), max_size=20)
-ENDS = st.one_of(
-    st.just({"form": "flat"}),
-    st.fixed_dictionaries({"form": st.just("cone"), "depth": LENGTHS}),
-    st.fixed_dictionaries({"form": st.just("ellipsoidal")}, optional={"ratio": st.integers(1, 4) | st.floats(1, 4)}),
-    st.fixed_dictionaries(
-        {"form": st.just("torispherical")},
-        optional={"crown_ratio": st.floats(0.6, 2), "knuckle_ratio": st.floats(0.02, 0.5)},
-    ),
-    st.just({"form": "hemispherical"}),
-)
-
-
-def sized(shape: str, *names: str, **optional: st.SearchStrategy[Any]) -> st.SearchStrategy[dict[str, Any]]:
-    sizes: dict[str, st.SearchStrategy[Any]] = {"shape": st.just(shape), **dict.fromkeys(names, LENGTHS)}
-    return st.fixed_dictionaries(sizes, optional=optional)
-
-
-VESSELS = st.one_of(
-    sized("upright_cylinder", "diameter", "height", floor=ENDS),
-    sized("box", "length", "width", "height"),
-    sized("cone", "top_diameter", "bottom_diameter", "height"),
-    sized("drum", "diameter", "length", heads=ENDS | st.lists(ENDS, min_size=2, max_size=2), fall=st.just("0 mm")),
-    sized("sphere", "diameter"),
-)
-COEFFICIENTS = st.just("handbook") | st.lists(st.floats(0.1, 1.5), min_size=3, max_size=3).map(
-    lambda range_: dict(zip(("low", "typical", "high"), sorted(range_), strict=True))
-)
-OUTLETS = st.fixed_dictionaries(
-    {
-        "kind": st.just("orifice"),
-        "opening": st.fixed_dictionaries({"form": st.just("round"), "diameter": LENGTHS})
-        | st.fixed_dictionaries({"form": st.just("rectangle"), "width": LENGTHS, "height": LENGTHS}),
-    },
-    optional={
-        "name": TEXTS,
-        "entry": st.sampled_from(["sharp_edged", "square_edged", "bellmouth", "reentrant_free"]),
-        "facing": st.sampled_from(["down", "side"]),
-        "elevation": LENGTHS,
-        "coefficient": COEFFICIENTS,
-        "count": st.integers(1, 10000),
-        "blocked": st.just(0),
-    },
-)
-CASES = st.fixed_dictionaries(
-    {
-        "headfall": st.just(1),
-        "vessel": VESSELS,
-        "outlets": st.lists(OUTLETS, min_size=1, max_size=3),
-        "levels": st.fixed_dictionaries({"start": LENGTHS, "stop": LENGTHS}, optional={"high": LENGTHS}),
-    },
-    optional={
-        "title": TEXTS,
-        "remarks": TEXTS,
-        "units": st.sampled_from(["metric", "us"]),
-        "liquid": st.fixed_dictionaries({}, optional={"name": st.just("water"), "temperature": st.just("60 degF")}),
-        "inflow": st.fixed_dictionaries(
-            {"kind": st.just("steady")}, optional={"rate": quantities(["L/s", "US gal/min"])}
-        ),
-        "headspace": st.just({"kind": "open"}),
-        "target": st.fixed_dictionaries({}, optional={"drain_time": quantities(["min", "s", "h"])}),
-        "structure": st.fixed_dictionaries(
-            {}, optional={"shell_thickness": LENGTHS, "joint_efficiency": st.floats(0.1, 1)}
-        ),
-        "surroundings": st.fixed_dictionaries({}, optional={"gravity": quantities(["m/s^2"])}),
-        "field_tests": st.just([]),
-    },
-)
-JUNK = st.recursive(
-    st.none() | st.booleans() | st.integers() | st.floats() | st.text(max_size=12) | LENGTHS,
-    lambda inner: st.lists(inner, max_size=3) | st.dictionaries(st.text(max_size=8), inner, max_size=4),
-    max_leaves=12,
-)
+SHAPES = ("upright_cylinder", "box", "cone", "drum", "sphere", "basin", "table", "stack")
+LISTS = ("outlets", "fittings", "sections", "displacement", "rows", "properties", "also_at", "times", "parts")
+KINDS = ("orifice", "pipe", "weir")
+FORMS = ("rectangular", "vnotch", "broad_crested", "standpipe")
 
 
 def paths(value: Any, here: Path = ()) -> list[Path]:
@@ -111,9 +46,9 @@ def paths(value: Any, here: Path = ()) -> list[Path]:
     if isinstance(value, tuple):
         for index, member in enumerate(value):
             found += [(*here, index), *paths(member, (*here, index))]
-    elif value is not None and type(value).__module__ == "headfall.case.model":
-        for name in attributes_of(type(value)):
-            found += [(*here, name), *paths(getattr(value, name), (*here, name))]
+    elif type(value).__module__.startswith("headfall.case."):
+        for key, attribute in attributes_of(type(value)).items():
+            found += [(*here, key), *paths(getattr(value, attribute.name), (*here, key))]
     return found
 
 
@@ -171,10 +106,61 @@ def test_any_end_can_become_any_other(data: dict[str, Any], form: str) -> None:
 
 @given(CASES, st.sampled_from(["round", "rectangle"]))
 def test_any_opening_can_become_any_other(data: dict[str, Any], form: str) -> None:
-    case = read_case_data(data)
+    case = change_outlet_kind(read_case_data(data), 0, "orifice")
     changed = change_opening_form(case, ("outlets", 0, "opening"), form)
     assert case_as_data(changed)["outlets"][0]["opening"]["form"] == form
     assert read_case_data(case_as_data(changed)) == changed
+
+
+@given(CASES, st.sampled_from(KINDS))
+def test_any_outlet_can_become_any_other_kind(data: dict[str, Any], kind: str) -> None:
+    case = read_case_data(data)
+    changed = change_outlet_kind(case, 0, kind)
+    assert case_as_data(changed)["outlets"][0]["kind"] == kind
+    assert read_case_data(case_as_data(changed)) == changed
+    assert changed.outlets[1:] == case.outlets[1:]
+
+
+@given(CASES, st.sampled_from(FORMS), st.sampled_from(FORMS))
+def test_any_weir_can_become_any_other(data: dict[str, Any], first: str, second: str) -> None:
+    case = change_outlet_kind(read_case_data(data), 0, "weir")
+    for form in (first, second):
+        case = change_weir_form(case, 0, form)
+        assert case_as_data(case)["outlets"][0]["form"] == form
+        assert read_case_data(case_as_data(case)) == case
+
+
+@given(CASES, st.sampled_from(["water", "glycerol", "own", "own_table"]))
+def test_any_liquid_can_become_any_other(data: dict[str, Any], liquid: str) -> None:
+    changed = change_liquid(read_case_data(data), liquid)
+    assert read_case_data(case_as_data(changed)) == changed
+
+
+@given(
+    CASES,
+    st.sampled_from(["none", "level", "vessel"]),
+    st.sampled_from(["", "open", "pressurised", "closed", "vented"]),
+    st.booleans(),
+)
+def test_tailwater_headspace_and_flow_limit_can_be_chosen(
+    data: dict[str, Any], tailwater: str, headspace: str, asked: bool
+) -> None:
+    case = change_tailwater(read_case_data(data), 0, tailwater)
+    case = change_flow_limit(change_headspace(case, headspace), asked)
+    assert read_case_data(case_as_data(case)) == case
+
+
+@given(CASES, st.data())
+def test_a_part_put_into_a_list_can_be_taken_out_again(data: dict[str, Any], draw: st.DataObject) -> None:
+    case = read_case_data(data)
+    lists = [path for path in paths(case) if path[-1] in LISTS and not (path[-1] == "parts" and len(path) > 2)]
+    path = draw.draw(st.sampled_from(lists))
+    present = value_at(case, path) or ()
+    index = draw.draw(st.integers(1 if path[-1] in ("rows", "outlets") else 0, len(present)))
+    longer = insert_part(case, path, index)
+    assert len(value_at(longer, path)) == len(present) + 1
+    back = remove_part(longer, (*path, index))
+    assert (value_at(back, path) or ()) == present
 
 
 @given(JUNK)

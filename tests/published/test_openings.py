@@ -23,7 +23,7 @@ def test_dighe_large_rectangular_orifice() -> None:
     # R. S. Dighe, Hydraulics Made Easy, ex. 4.20, p. 132 (read in the FOSSEE companions): 3 ft wide, edges 0.75 ft and
     # 1.5 ft below the surface, C_d 0.62: 709.1 ft³/min.
     hole = opening("rectangle", "side", 3 * FOOT, 0.75 * FOOT, 0.375 * FOOT, 32.2 * FOOT)
-    flow = float(hole.flow(np.array(1.5 * FOOT), 0.62))
+    flow = float(hole.flow(np.array(1.5 * FOOT), np.array([0.62])))
     assert flow / FOOT**3 * 60 == pytest.approx(709.1, abs=0.1)
 
 
@@ -62,7 +62,7 @@ def test_integrated_circle_against_the_centroid_formula(heads_over_diameter: flo
     hole = opening("round", "side", 0.1, 0.1, 0.5, 9.80665)
     level = np.array(0.5 + 0.1 * heads_over_diameter)
     centroid = 0.62 * hole.area * np.sqrt(2 * 9.80665 * 0.1 * heads_over_diameter)
-    assert float(hole.flow(level, 0.62)) / centroid == pytest.approx(ratio, abs=6e-5)
+    assert float(hole.flow(level, np.array([0.62]))) / centroid == pytest.approx(ratio, abs=6e-5)
 
 
 def test_sharp_edge_against_bovey_and_unwin() -> None:

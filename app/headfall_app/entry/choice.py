@@ -7,9 +7,9 @@ from PySide6.QtGui import QFocusEvent, QKeyEvent, QPainter, QPaintEvent, QPalett
 from PySide6.QtWidgets import QComboBox, QStyle, QStyleOptionComboBox, QStylePainter, QWidget
 
 from headfall_app.document import Document
-from headfall_app.entry.changes import choose, chosen, words_of
+from headfall_app.entry.choices import choose, chosen, words_of
 from headfall_app.entry.field import Field
-from headfall_app.entry.plan import Row
+from headfall_app.entry.plan_rows import Row
 
 _ARROW = 20
 _OPENING_KEYS = (
@@ -95,7 +95,12 @@ class ChoiceField(Field):
         value = chosen(self.document.case, self.row)
         for index, (choice, text) in enumerate(self.row.choices):
             self.box.setItemText(index, words_of(self.document.case, self.row, choice, text))
-        self.box.setCurrentIndex(self.box.findData(value or self.row.default))
+        place = self.box.findData(value or self.row.default)
+        if place < 0 and value:
+            # A word typed into the file by hand: shown as it is, so that it can be seen and changed.
+            self.box.addItem(value, value)
+            place = self.box.count() - 1
+        self.box.setCurrentIndex(place)
         self.set_untyped(not value)
         wrong = self.document.wrong.get(self.row.path)
         self.show_reason(wrong.sentence if wrong else "")

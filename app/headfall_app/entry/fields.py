@@ -4,12 +4,13 @@ from __future__ import annotations
 
 from PySide6.QtWidgets import QWidget
 
+from headfall.case.model import LossRange
 from headfall.quantities import Quantity
 from headfall_app.document import Document
-from headfall_app.entry.echo import echo_of
+from headfall_app.entry.echo import echo_of, level_echo
 from headfall_app.entry.field import ECHO_WIDTH, GAP, Field
 from headfall_app.entry.line import EntryLine
-from headfall_app.entry.plan import Row
+from headfall_app.entry.plan_rows import Row
 from headfall_app.entry.stepping import number_in, stepped, written
 from headfall_app.entry.typed import Refused, read_typed, unit_for, value_or_none
 from headfall_app.words import key_of, lowered, words
@@ -133,6 +134,8 @@ class QuantityField(LineField):
     def echo_text(self) -> str:
         value = value_or_none(self.document.case, self.row.path)
         wrong = self.row.path in self.document.wrong
+        if isinstance(value, Quantity) and self.row.dimension == "level" and value.dimension != "length":
+            return "" if wrong else level_echo(self.document, self.row.path)
         return echo_of(value, self.row, self.document.display) if isinstance(value, Quantity) and not wrong else ""
 
 
@@ -140,6 +143,10 @@ class NumberField(LineField):
     """A plain number without a unit."""
 
     def text_of(self, value: object) -> str:
+        if isinstance(value, LossRange):
+            return "; ".join(f"{one or 0.0:.6g}" for one in (value.low, value.typical, value.high))
+        if isinstance(value, tuple):
+            return "; ".join(f"{one:.6g}" for one in value)
         return f"{value:.10g}" if isinstance(value, (int, float)) else ""
 
     def stepped_text(self, text: str, steps: int) -> str:
@@ -155,3 +162,14 @@ class TextField(LineField):
     def __init__(self, row: Row, document: Document, parent: QWidget | None = None) -> None:
         super().__init__(row, document, parent)
         self.hide_echo()
+
+
+class ListField(LineField):
+    """Several quantities in one line, a semicolon or a comma between them."""
+
+    def __init__(self, row: Row, document: Document, parent: QWidget | None = None) -> None:
+        super().__init__(row, document, parent)
+        self.hide_echo()
+
+    def text_of(self, value: object) -> str:
+        return "; ".join(one.text for one in value) if isinstance(value, tuple) else ""

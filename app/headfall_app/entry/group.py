@@ -8,17 +8,22 @@ from PySide6.QtWidgets import QVBoxLayout, QWidget
 
 from headfall.case.model import Path
 from headfall_app.document import Document
+from headfall_app.entry.action import ActionField
 from headfall_app.entry.beside import beside
 from headfall_app.entry.changes import add_outlet, remove_outlet
 from headfall_app.entry.choice import ChoiceField
 from headfall_app.entry.field import Field
-from headfall_app.entry.fields import NumberField, QuantityField, TextField
+from headfall_app.entry.fields import ListField, NumberField, QuantityField, TextField
 from headfall_app.entry.heading import GroupHeading
-from headfall_app.entry.plan import Group, Row
+from headfall_app.entry.plan_rows import Group, Row
+from headfall_app.entry.table_field import TableField
 from headfall_app.label import label
 from headfall_app.words import group_title, words
 
 _FIELDS: dict[str, Callable[[Row, Document], Field]] = {
+    "action": ActionField,
+    "list": ListField,
+    "table": TableField,
     "quantity": QuantityField,
     "number": NumberField,
     "text": TextField,
@@ -32,7 +37,7 @@ class GroupBox(QWidget):
     def __init__(self, group: Group, document: Document, parent: QWidget | None = None) -> None:
         super().__init__(parent)
         self._document, self.group = document, Group(group.key, group.path, (), group.folds)
-        title = group_title(group.path) if group.path else words()["groups"]["heading"]
+        title = words()["groups"].get(group.key) or (group_title(group.path) if group.path else "")
         self.heading = GroupHeading(title, group.folds, self)
         self.heading.folded_changed.connect(self._fold)
         self._remark = label("remark", 12, wraps=True)

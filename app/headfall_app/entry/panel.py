@@ -14,7 +14,7 @@ from headfall.quantities import DisplayUnits
 from headfall_app.document import Document
 from headfall_app.entry.field import Field
 from headfall_app.entry.group import GroupBox
-from headfall_app.entry.plan import Group, groups_of
+from headfall_app.entry.plan import Group, groups_of, rows_hang_on
 from headfall_app.entry.typed import value_or_none
 from headfall_app.paint.theme import Theme
 from headfall_app.undo import WrongEntry
@@ -110,7 +110,8 @@ class EntryPanel(QWidget):
 
     def box_of(self, path: Path) -> GroupBox | None:
         """Return the group an entry stands in."""
-        fits = [box for box in self._boxes if box.group.path and path[: len(box.group.path)] == box.group.path]
+        fits = [box for box in self._boxes if any(row.path == path for row in box.group.rows)]
+        fits += [box for box in self._boxes if box.group.path and path[: len(box.group.path)] == box.group.path]
         return fits[0] if fits else self._boxes[-1] if len(path) == 1 else None
 
     def _begin_anew(self) -> None:
@@ -188,8 +189,11 @@ class EntryPanel(QWidget):
 
 
 def _same_rows(before: _Seen | None, now: _Seen) -> bool:
-    """Whether the rows are certainly the same: they hang on the vessel and the outlets alone."""
-    return before is not None and before[0].vessel is now[0].vessel and before[0].outlets is now[0].outlets
+    """Whether the rows are certainly the same: what they hang on has not changed."""
+    if before is None:
+        return False
+    pairs = zip(rows_hang_on(before[0]), rows_hang_on(now[0]), strict=True)
+    return all(former is present for former, present in pairs)
 
 
 def _alike(path: Path, before: _Seen | None, now: _Seen) -> bool:

@@ -7,9 +7,10 @@ from typing import Any
 
 from headfall.case.editing import read_entry, value_at
 from headfall.case.faults import CaseError
-from headfall.case.model import Case, Path
-from headfall.quantities import Quantity, QuantityFault, is_bare_number, parse
-from headfall_app.entry.plan import Row
+from headfall.case.model import Case, LossRange, Path
+from headfall.case.values import read_quantity
+from headfall.quantities import Quantity, QuantityFault, is_bare_number
+from headfall_app.entry.plan_rows import Row
 
 
 class Refused(Exception):
@@ -28,12 +29,55 @@ def read_typed(case: Case, row: Row, text: str) -> object:
     """Return the value of a typed text, None for an empty one that may be left out; raises ``Refused``."""
     if row.kind == "text":
         return text or None
+    if row.kind == "list":
+        return _read_list(case, row, text)
     if row.kind == "quantity" and is_bare_number(text):
         text = _with_unit(text.strip(), unit_for(case, row), row.dimension)
     try:
+        if _may_be_range(row) and len(_cut(text)) == 3:
+            return _read_range(case, row, text)
         return read_entry(case, row.path, text)
     except CaseError as refusal:
         raise Refused(refusal.faults[0].sentence) from refusal
+
+
+_RANGED = ("entry_loss", "loss")
+_ALIKE = {"level": ("length",), "bore": ("length",)}
+
+
+def _may_be_range(row: Row) -> bool:
+    """Whether a loss may be typed as lowest, typical and highest."""
+    return row.kind == "number" and row.path[-1] in _RANGED
+
+
+def _cut(text: str) -> list[str]:
+    return [part.strip() for part in text.replace("·", ";").replace(" / ", ";").split(";") if part.strip()]
+
+
+def _read_range(case: Case, row: Row, text: str) -> LossRange:
+    low, typical, high = (read_entry(case, row.path, part) for part in _cut(text))
+    if not low <= typical <= high:
+        raise Refused(f"{text.strip()} does not rise. Type lowest; typical; highest, such as 0.4; 0.5; 0.6.")
+    return LossRange(low, typical, high)
+
+
+def _read_list(case: Case, row: Row, text: str) -> object:
+    """Return several quantities typed in one line, None for an empty one; a bare number takes the unit behind it."""
+    parts = _cut(text.replace(", ", ";"))
+    if not parts:
+        return None
+    found: list[Quantity] = []
+    unit = ""
+    try:
+        for part in reversed(parts):
+            quantity = read_quantity(
+                _with_unit(part, unit, row.dimension) if is_bare_number(part) else part, row.dimension
+            )
+            unit = quantity.unit
+            found.append(quantity)
+    except QuantityFault as fault:
+        raise Refused(fault.sentence) from fault
+    return tuple(reversed(found))
 
 
 def unit_for(case: Case, row: Row) -> str:
@@ -42,12 +86,12 @@ def unit_for(case: Case, row: Row) -> str:
     if isinstance(value, Quantity) and value.unit:
         return value.unit
     if row.default:
-        return parse(row.default, row.dimension).unit
+        return read_quantity(row.default, row.dimension).unit
     part = value_or_none(case, row.path[:-1])
     if is_dataclass(part):
         for attribute in fields(part):
             neighbour = getattr(part, attribute.name)
-            if isinstance(neighbour, Quantity) and neighbour.dimension == row.dimension and neighbour.unit:
+            if isinstance(neighbour, Quantity) and neighbour.dimension in _ALIKE.get(row.dimension, (row.dimension,)):
                 return neighbour.unit
     return ""
 
@@ -56,6 +100,6 @@ def _with_unit(text: str, unit: str, dimension: str) -> str:
     if not unit:
         return text
     try:
-        return parse(f"{text} {unit}", dimension).text
+        return read_quantity(f"{text} {unit}", dimension).text
     except QuantityFault:
         return text

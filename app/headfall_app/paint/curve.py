@@ -2,6 +2,9 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
+from itertools import pairwise
+
 import numpy as np
 from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
 from PySide6.QtGui import QPainter
@@ -61,94 +64,25 @@ def paint_range(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> 
         painter.drawPolyline(polygon(x, y))
 
 
-def paint_not_defended(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
-    """Hatch what lies below the level down to which the curve is defended."""
-    if scene.not_defended is None or frame.plot is None:
-        return
-    left, _, right, bottom = frame.plot
-    top = float(frame.row(scene.not_defended))
-    painter.save()
-    painter.setClipRect(QRectF(left, top, right - left, bottom - top), Qt.ClipOperation.IntersectClip)
-    painter.setPen(pen(theme.mixed("edge", "surface", 0.55), 1.0))
-    tall = bottom - top
-    painter.drawLines([QLineF(x, bottom, x + tall, top) for x in np.arange(left - tall, right, 8.0)])
-    painter.restore()
-
-
 def paint_run(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
-    """Paint the typical run, dashed where it is not defended."""
+    """Paint the typical run, dashed where it is not to be relied on."""
     x, y = curve_points(frame, scene.curve)
     accent = theme.colour("accent")
-    if scene.not_defended is None:
+    if not scene.loose:
         fill(painter, ribbon(x, y, WIDTH), accent)
         return
-    held = scene.curve.level >= scene.not_defended
-    if held.any():
-        last = int(np.nonzero(held)[0][-1]) + 2
-        first = int(np.nonzero(held)[0][0])
-        fill(painter, ribbon(x[max(first - 1, 0) : last], y[max(first - 1, 0) : last], WIDTH), accent)
-        loose = (x[last - 1 :], y[last - 1 :]) if first == 0 else (x[: first + 1], y[: first + 1])
-    else:
-        loose = (x, y)
-    painter.setPen(pen(accent, WIDTH, "not_defended"))
-    painter.drawPolyline(polygon(*loose))
-
-
-def not_defended_box(frame: Frame, scene: Scene) -> QRectF:
-    """Return where it stands down to which level the curve is defended: by that level, where no line runs."""
-    return _not_defended_place(frame, scene)[0]
-
-
-def _not_defended_place(frame: Frame, scene: Scene) -> tuple[QRectF, bool]:
-    """Return the words' box and whether it is clear of every curve."""
-    if scene.not_defended is None or frame.plot is None:
-        return QRectF(), False
-    left, top, right, bottom = frame.plot
-    edge = frame.row(scene.not_defended)
-    wide = text_width(scene.not_defended_text, 11)
-    columns = [float(column) for column in np.arange(left + 9.0, max(right - wide - 6.0, left + 10.0), 12.0)]
-    below = [edge + 13.0 + step for step in range(0, 40, 4)]
-    above = [edge - 11.0 - step for step in range(0, 60, 4)]
-    rows = [row for row in (*below, *above) if top + 10.0 < row < bottom - 8.0]
-    boxes = [
-        lettering.text_box(QPointF(column, row), scene.not_defended_text, 11) for row in rows for column in columns
-    ]
-    levels = [frame.row(mark.level) for mark in scene.marks if mark.key != "now"]
-    cursor = frame.time_x(scene.now) if scene.now is not None else None
-    arrival = arrival_box(frame, scene)
-
-    def keeps_clear(box: QRectF) -> bool:
-        struck = cursor is not None and box.left() - 8.0 < cursor < box.right() + 8.0
-        return not struck and all(abs(box.center().y() - row) > 9.0 for row in levels)
-
-    # Nothing struck at all is best; a level line or the cursor under the plate is borne, a curve is not.
-    for wanted in (keeps_clear, lambda box: not keeps_clear(box)):
-        for box in boxes:
-            if wanted(box) and not _meets_curve(frame, scene, box, arrival):
-                return box, True
-    return lettering.text_box(QPointF(left + 9.0, edge - 11.0), scene.not_defended_text, 11), False
-
-
-def _meets_curve(frame: Frame, scene: Scene, box: QRectF, arrival: QRectF) -> bool:
-    """Return whether a run or the time of its end comes within a few pixels of a box."""
-    if arrival.intersects(box):
-        return True
-    times = np.linspace(frame.time(box.left() - 6.0), frame.time(box.right() + 6.0), 16)
-    for run in (scene.curve_low, scene.curve, scene.curve_high):
-        within = times[times <= run.time[-1]] if run.ends != "settled" else times
-        rows = frame.bottom - np.interp(within, run.time, run.level) * frame.pixels_per_metre
-        if len(rows) and rows.min() < box.bottom() + 3.0 and rows.max() > box.top() - 3.0:
-            return True
-    return False
-
-
-def paint_not_defended_text(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
-    """Write down to which level the curve is defended, without a plate where that would cut a curve."""
-    box, clear = _not_defended_place(frame, scene)
-    if not box.isNull():
-        at = QPointF(box.left(), box.center().y())
-        plate = theme.colour("surface") if clear else None
-        lettering.write(painter, at, scene.not_defended_text, theme.colour("ink"), 11, plate=plate)
+    level = 0.5 * (scene.curve.level[1:] + scene.curve.level[:-1])
+    loose = np.zeros(len(level), dtype=bool)
+    for part in scene.loose:
+        loose |= (level >= part.low) & (level < part.high)
+    turns = np.flatnonzero(np.diff(loose)) + 1
+    for start, end in pairwise((0, *turns.tolist(), len(level))):
+        stretch = slice(start, end + 1)
+        if loose[start]:
+            painter.setPen(pen(accent, WIDTH, "not_defended"))
+            painter.drawPolyline(polygon(x[stretch], y[stretch]))
+        else:
+            fill(painter, ribbon(x[stretch], y[stretch], WIDTH), accent)
 
 
 def paint_arrival(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
@@ -204,8 +138,8 @@ def arrival_box(frame: Frame, scene: Scene) -> QRectF:
     return lettering.text_box(QPointF(middle, at), arrival.text, 12, 600, lettering.CENTRE)
 
 
-def remark_box(frame: Frame, scene: Scene) -> QRectF:
-    """Return where the remark stands: at the right, clear of curve, level lines and other words."""
+def remark_box(frame: Frame, scene: Scene, taken: Sequence[QRectF] = ()) -> QRectF:
+    """Return where the remark stands: at the right, clear of curve, level lines and the words ``taken``."""
     if not scene.remark or frame.plot is None:
         return QRectF()
     left, top, right, bottom = frame.plot
@@ -216,7 +150,7 @@ def remark_box(frame: Frame, scene: Scene) -> QRectF:
     runs = (scene.curve_low, scene.curve_high, scene.curve)
     rows = [frame.y(level_at(run, frame.time(end))) for run in runs for end in ends]
     rows += [frame.y(one) for one in (level, *(scene.settling or ()))]
-    taken = not_defended_box(frame, scene).adjusted(-6.0, -3.0, 6.0, 3.0)
+    words = [box.adjusted(-6.0, -3.0, 6.0, 3.0) for box in taken]
 
     def box(row: float) -> QRectF:
         return lettering.text_box(QPointF(right - 4.0, row), text, 12, 600, lettering.RIGHT)
@@ -224,15 +158,15 @@ def remark_box(frame: Frame, scene: Scene) -> QRectF:
     below = [max(rows) + 15.0 + step for step in range(0, 40, 2)]
     above = [min(rows) - 15.0 - step for step in range(0, 120, 2)]
     for row in (*below, *above):
-        clear = all(abs(row - line) > 10.0 for line in lines) and not box(row).intersects(taken)
+        clear = all(abs(row - line) > 10.0 for line in lines) and not any(box(row).intersects(other) for other in words)
         if clear and top + 8.0 < row < bottom - 6.0:
             return box(row)
     return box(min(max(above[0], top + 8.0), bottom - 8.0))
 
 
-def paint_remark(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+def paint_remark(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, taken: Sequence[QRectF] = ()) -> None:
     """Write what happens instead of an arrival."""
-    box = remark_box(frame, scene)
+    box = remark_box(frame, scene, taken)
     if box.isNull() or frame.plot is None:
         return
     text = lettering.elided(scene.remark, frame.plot[2] - frame.plot[0] - 8.0, 12, 600)

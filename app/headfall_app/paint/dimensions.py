@@ -20,6 +20,7 @@ from headfall_app.paint.scene import Scene
 from headfall_app.paint.scene_dimensions import SizeLine
 from headfall_app.paint.strokes import level_line, pen, plumb_line
 from headfall_app.paint.theme import Theme
+from headfall_app.paint.waterways import pipe_run, run_boxes
 
 _CLEARANCE = 5.0
 _STROKE = 3.5
@@ -61,6 +62,14 @@ class _Line:
     lit: bool
     outwards: float
     column: float | None = None
+    share: float = 0.5
+    """How far along the line its text stands."""
+
+    @property
+    def middle(self) -> float:
+        """Where its text stands along the line."""
+        left, right = round(self.ends[0]), round(self.ends[1])
+        return left + self.share * (right - left)
 
     @property
     def weight(self) -> int:
@@ -75,7 +84,7 @@ class _Line:
     @property
     def is_gapped(self) -> bool:
         """Whether the text stands in a gap of the line, not past its outer end."""
-        return self.room <= round(self.ends[1]) - round(self.ends[0]) - 12.0
+        return self.room <= 2.0 * min(self.share, 1.0 - self.share) * (round(self.ends[1]) - round(self.ends[0])) - 12.0
 
 
 def paint_dimensions(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, kept: Kept | None = None) -> None:
@@ -130,7 +139,22 @@ def _level_lines(frame: Frame, scene: Scene) -> Iterator[_Line]:
     for size, row in _rows(frame):
         left, right = sorted((frame.across.x(size.start[0]), frame.across.x(size.end[0])))
         outwards = -1.0 if left + right < frame.across.left + frame.across.right - 1.0 else 1.0
-        yield _Line((left, right), row, shown_text(frame, scene, size), size.lit, outwards)
+        text = shown_text(frame, scene, size)
+        yield _Line(
+            (left, right), row, text, size.lit, outwards, share=_clear_share(frame, scene, left, right, row, text)
+        )
+
+
+def _clear_share(frame: Frame, scene: Scene, left: float, right: float, row: float, text: str) -> float:
+    """Where a text stands clear of the pipes that run down past its line: in the middle, else at a quarter."""
+    half = 0.5 * text_width(text, 12) + 8.0
+    boxes = [box for one in scene.outlets if one.bores for box in run_boxes(pipe_run(frame, scene, one))]
+    struck = [box for box in boxes if box.top() - 10.0 < row < box.bottom() + 10.0]
+    for share in (0.5, 0.25, 0.75):
+        middle = left + share * (right - left)
+        if not any(box.left() < middle + half and box.right() > middle - half for box in struck):
+            return share
+    return 0.5
 
 
 def _upright_witness(painter: QPainter, frame: Frame, scene: Scene, size: SizeLine, place: float, theme: Theme) -> None:
@@ -178,7 +202,7 @@ def _paint_line(painter: QPainter, line: _Line, theme: Theme) -> None:
     colour = theme.colour("accent" if line.lit else "muted")
     width = 1.6 if line.lit else 1.0
     left, right = round(line.ends[0]), round(line.ends[1])
-    middle, half = 0.5 * (left + right), 0.5 * line.room
+    middle, half = line.middle, 0.5 * line.room
     drawn = pen(colour, width)
     with _turned(painter, line):
         if line.is_gapped:
@@ -195,7 +219,7 @@ def _write(painter: QPainter, line: _Line, theme: Theme) -> None:
     """Write the line's text in its gap, or past its outer end."""
     left, right = round(line.ends[0]), round(line.ends[1])
     if line.is_gapped:
-        at, align = QPointF(0.5 * (left + right), line.row), lettering.CENTRE
+        at, align = QPointF(line.middle, line.row), lettering.CENTRE
     elif line.outwards > 0.0:
         at, align = QPointF(right + 9.0, line.row), lettering.LEFT
     else:

@@ -11,6 +11,7 @@ from PySide6.QtGui import QBrush, QColor, QLinearGradient, QPainter
 
 from headfall.quantities.display import NO_BREAK
 from headfall_app.paint import lettering
+from headfall_app.paint.around import paint_tailwater
 from headfall_app.paint.fonts import text_width
 from headfall_app.paint.layout import JET, Frame
 from headfall_app.paint.outline_geometry import floor_under, outlet_across, surface_span
@@ -20,6 +21,7 @@ from headfall_app.paint.section import WALL
 from headfall_app.paint.staff import numbers_left
 from headfall_app.paint.strokes import fill, pen, plumb_line, polygon, ribbon
 from headfall_app.paint.theme import Theme
+from headfall_app.paint.waterways import Run, paint_pipe, paint_weir, run_boxes
 
 LEAST_WIDTH = 3.0
 _LINE = 17.0
@@ -57,11 +59,46 @@ def paint_jets(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> l
         boxes.append(
             (index, _label(painter, frame, scene, index, _beside(frame, scene, index, place, wide), taken, theme))
         )
+    boxes += _paint_waterways(painter, frame, scene, taken, theme)
     for index, outlet in enumerate(scene.outlets):
         if outlet.facing == "side":
             foot = _paint_sideways(painter, frame, scene, outlet, theme)
             boxes.append((index, _label(painter, frame, scene, index, _over(frame, scene, index, foot), taken, theme)))
     return boxes
+
+
+def _paint_waterways(
+    painter: QPainter, frame: Frame, scene: Scene, taken: list[QRectF], theme: Theme
+) -> list[tuple[int, QRectF]]:
+    """Paint pipes, weirs and standpipes and write their sizes and flows."""
+    boxes = []
+    for index, outlet in enumerate(scene.outlets):
+        paint_tailwater(painter, frame, scene, outlet, theme)
+        if outlet.facing in ("pipe", "standpipe"):
+            run = paint_pipe(painter, frame, scene, outlet, theme)
+            taken += [box.adjusted(-4.0, -2.0, 4.0, 2.0) for box in run_boxes(run)]
+            ways = _along(frame, outlet, run)
+        elif outlet.facing == "weir":
+            foot = paint_weir(painter, frame, scene, outlet, theme)
+            ways = _over(frame, scene, index, foot)
+        else:
+            continue
+        boxes.append((index, _label(painter, frame, scene, index, ways, taken, theme)))
+    return boxes
+
+
+def _along(frame: Frame, outlet: DrawnOutlet, run: Run) -> Iterator[Label]:
+    """Give the ways to label a pipe: beside its leg, left or right, then under its end."""
+    (x, first), last = run.corners[0], run.corners[-1]
+    size, flow = outlet.size_text, outlet.flow_text
+    half = 0.5 * run.bore + 12.0
+    low = max(first, frame.bottom) + 26.0
+    for row in (low, low + 14.0, last[1] - 22.0, last[1] + 24.0, last[1] + 40.0):
+        upper, lower = row - 0.5 * _LINE, row + 0.5 * _LINE
+        for at, align in ((x - half, lettering.RIGHT), (last[0] + 12.0, lettering.LEFT), (x + half, lettering.LEFT)):
+            yield (QPointF(at, upper), size, align), (QPointF(at, lower), flow, align)
+    for row in (last[1] + 24.0, last[1] + 60.0):
+        yield (QPointF(x, row), size, lettering.CENTRE), (QPointF(x, row + _LINE), flow, lettering.CENTRE)
 
 
 def _opening_row(frame: Frame, scene: Scene, outlet: DrawnOutlet, place: float) -> float:

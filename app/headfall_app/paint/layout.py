@@ -102,7 +102,7 @@ class _Room:
 def room_about(scene: Scene) -> _Room:
     """Return the room for dimension lines, jets and the stream about the vessel."""
     plan = plan_dimensions(scene)
-    downs = sum(outlet.facing == "down" for outlet in scene.outlets)
+    downs = sum(outlet.facing in ("down", "pipe", "standpipe") for outlet in scene.outlets)
     first_row = 66.0 if downs else 24.0
     if downs > 2:
         first_row = 96.0
@@ -114,9 +114,12 @@ def room_about(scene: Scene) -> _Room:
     return _Room(plan, TOP_ZONE + ROW * plan.above_count, left, first_row, under)
 
 
-def _band_limit(height: float, room: _Room) -> tuple[float, bool]:
-    """Return the tallest level band and whether the flow plot has room under it."""
-    beside_slider = height - room.top - room.under - SLIDER - 14.0
+def _band_limit(height: float, room: _Room, share: float) -> tuple[float, bool]:
+    """Return the tallest level band and whether the flow plot has room under it.
+
+    ``share`` is how much of all that is drawn the vessel takes: a pipe that falls needs room below it.
+    """
+    beside_slider = (height - room.top - room.under - SLIDER - 14.0) * share
     shared = height - room.top - PLOT_GAP - AXIS_ZONE
     with_flow = min(shared / (1.0 + FLOW_SHARE), shared - LEAST_FLOW)
     if with_flow < 130.0:
@@ -139,7 +142,7 @@ def _stretches(scene: Scene, limit: float, band: float, show: str) -> tuple[tupl
     if tall >= CUT_SHARE * band:
         return (whole,), False
     scale = band / scene.height
-    places = [outlet_across(scene.outline, one.station) for one in scene.outlets if one.facing == "down"]
+    places = [outlet_across(scene.outline, one.station) for one in scene.outlets if one.facing in ("down", "pipe")]
     shown = limit / scale - reach - BREAK_WIDTH / scale
     stretches = shown_stretches(whole, uniform, places, shown, 46.0 / scale)
     if len(stretches) > 2:
@@ -158,7 +161,8 @@ def _column(width: float) -> float:
 def arrange(width: float, height: float, scene: Scene, show: str = "auto") -> Frame:
     """Return the geometry of the stage; ``show`` is ``auto`` or ``whole`` (never cut)."""
     room = room_about(scene)
-    band, with_flow = _band_limit(height, room)
+    depth = -scene.lowest
+    band, with_flow = _band_limit(height, room, scene.height / (scene.height + depth))
     reach = scene.farthest_reach
     column = _column(width)
     limit = max(column - room.left - STAFF_NUMBERS, 80.0)
@@ -193,6 +197,6 @@ def arrange(width: float, height: float, scene: Scene, show: str = "auto") -> Fr
         times=time_axis(scene.longest, plot[2] - plot[0]),
         first_row=room.first_row,
         can_be_cut=can_be_cut,
-        needed=max(axis_bottom, bottom + room.under + 14.0 + SLIDER),
-        under=room.under,
+        needed=max(axis_bottom, bottom + depth * scale + room.under + 14.0 + SLIDER),
+        under=room.under + depth * scale,
     )

@@ -7,7 +7,7 @@ from dataclasses import replace
 from PySide6.QtCore import QPointF, QRectF
 from PySide6.QtGui import QPainter
 
-from headfall_app.paint import curve, flow, lettering
+from headfall_app.paint import curve, flow, lettering, loose
 from headfall_app.paint.cut import Across
 from headfall_app.paint.flags import paint_flags
 from headfall_app.paint.layout import (
@@ -125,14 +125,14 @@ def paint_curve(painter: QPainter, rectangle: QRectF, scene: Scene, theme: Theme
     painter.translate(rectangle.topLeft())
     paint_staff(painter, frame, scene, theme)
     curve.paint_grid(painter, frame, scene, theme)
-    curve.paint_not_defended(painter, frame, scene, theme)
+    loose.paint_loose(painter, frame, scene, theme)
     curve.paint_range(painter, frame, scene, theme)
     paint_plot_levels(painter, frame, scene, theme)
     curve.paint_time_marks(painter, frame, theme)
     curve.paint_run(painter, frame, scene, theme)
     curve.paint_cursor(painter, frame, scene, theme)
-    curve.paint_not_defended_text(painter, frame, scene, theme)
-    curve.paint_remark(painter, frame, scene, theme)
+    words = loose.paint_loose_words(painter, frame, scene, theme)
+    curve.paint_remark(painter, frame, scene, theme, words)
     curve.paint_arrival(painter, frame, scene, theme)
     curve.paint_cursor_dot(painter, frame, scene, theme)
     paint_flags(painter, frame, scene, theme)

@@ -2,17 +2,30 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 
 from headfall.answers import Answers, Curve
-from headfall.case.model import Box, Case, FlatEnd, Path, UprightCylinder
+from headfall.case.model import Box, Case, FlatEnd, Path, SlopedFloor, TableVessel, UprightCylinder
+from headfall.outlet.orifice import OrificeOutlet
 from headfall.quantities import DisplayUnits, duration
 from headfall.vessel.profile import Outline
+from headfall_app.paint.scene_around import (
+    DrawnBody,
+    DrawnLid,
+    DrawnReceiver,
+    drawn_bodies,
+    drawn_lid,
+    drawn_receiver,
+    lowest_drawn,
+)
 from headfall_app.paint.scene_dimensions import SizeLine, size_lines
 from headfall_app.paint.scene_levels import LevelMark, level_marks
+from headfall_app.paint.scene_loose import LoosePart, loose_parts
 from headfall_app.paint.scene_outlets import DrawnOutlet, drawn_outlets
+
+_WIDEST_TABLE = 2.2
 
 
 @dataclass(frozen=True, slots=True)
@@ -54,8 +67,12 @@ class Scene:
     remark: str
     settling: tuple[float, float] | None
     settles_at: float | None
-    not_defended: float | None
-    not_defended_text: str
+    loose: tuple[LoosePart, ...]
+    receiver: DrawnReceiver | None
+    bodies: tuple[DrawnBody, ...]
+    lid: DrawnLid | None
+    lowest: float
+    section_title: str
     shaded_text: str
     display: DisplayUnits
 
@@ -63,7 +80,7 @@ class Scene:
     def stands(self) -> bool:
         """Whether the vessel stands on the ground: a jet leaves sideways and none leaves through the floor."""
         faces = {outlet.facing for outlet in self.outlets}
-        return faces == {"side"}
+        return bool(faces) and faces <= {"side", "weir"}
 
     @property
     def drains_down(self) -> bool:
@@ -89,16 +106,17 @@ def scene_of(answers: Answers, display: DisplayUnits, *, now: float | None = Non
     """
     time = 0.0 if now is None else min(max(now, 0.0), float(answers.curve.time[-1]))
     typical, low, high = (level_at(run, time) for run in (answers.curve, answers.curve_low, answers.curve_high))
-    limit = _not_defended(answers)
-    outline = answers.system.profile.outline
+    outline, to_scale = _drawn_outline(answers)
+    outlets = drawn_outlets(answers, display, typical, lit)
+    receiver = drawn_receiver(answers, display, typical)
     settles = answers.equilibrium.level
     return Scene(
         outline=outline,
-        has_axis=answers.case.vessel.shape != "box",
+        has_axis=answers.case.vessel.shape not in ("box", "basin", "table", "stack") and not _slopes(answers.case),
         uniform=_uniform(answers.case, outline),
         height=answers.system.profile.height,
         marks=level_marks(answers, display, typical if now is not None else None),
-        outlets=drawn_outlets(answers, display, typical, lit),
+        outlets=outlets,
         sizes=size_lines(answers.case, outline, display, lit),
         inflow=answers.system.inflow,
         inflow_text=f"{display.text(answers.system.inflow, 'flow')} in" if answers.system.inflow > 0.0 else "",
@@ -115,11 +133,34 @@ def scene_of(answers: Answers, display: DisplayUnits, *, now: float | None = Non
         remark=_remark(answers, display),
         settling=_settling(answers),
         settles_at=None if answers.equilibrium.overflows else settles.typical,
-        not_defended=limit,
-        not_defended_text="" if limit is None else f"not to be relied on below {display.text(limit, 'level')}",
+        loose=loose_parts(answers, display),
+        receiver=receiver,
+        bodies=drawn_bodies(answers),
+        lid=drawn_lid(answers, display, time),
+        lowest=lowest_drawn(outlets, receiver),
+        section_title="Section, to scale" if to_scale else "Section, heights to scale",
         shaded_text=_shaded(answers),
         display=display,
     )
+
+
+def _drawn_outline(answers: Answers) -> tuple[Outline, bool]:
+    """The outline to draw, and whether it is true across: a table says nothing of widths, and is drawn no wider than
+
+    a few times its height.
+    """
+    outline = answers.system.profile.outline
+    if not isinstance(answers.case.vessel, TableVessel):
+        return outline, True
+    wide = float(outline.wall[:, 0].max() - outline.wall[:, 0].min())
+    share = min(1.0, _WIDEST_TABLE * answers.system.profile.height / wide)
+    return replace(outline, wall=outline.wall * np.array([share, 1.0])), share == 1.0
+
+
+def _slopes(case: Case) -> bool:
+    """Whether the vessel has no axis to draw: a floor or a drum that slopes."""
+    floor, fall = getattr(case.vessel, "floor", None), getattr(case.vessel, "fall", None)
+    return isinstance(floor, SlopedFloor) or (fall is not None and fall.value > 0)
 
 
 def _uniform(case: Case, outline: Outline) -> tuple[float, float] | None:
@@ -128,7 +169,7 @@ def _uniform(case: Case, outline: Outline) -> tuple[float, float] | None:
     if outline.uniform is not None:
         return outline.uniform
     flat = isinstance(vessel, UprightCylinder) and (vessel.floor is None or isinstance(vessel.floor, FlatEnd))
-    if isinstance(vessel, Box) or flat:
+    if (isinstance(vessel, Box) and not _slopes(case)) or flat:
         return float(outline.wall[:, 0].min()), float(outline.wall[:, 0].max())
     return None
 
@@ -152,6 +193,8 @@ def _remark(answers: Answers, display: DisplayUnits) -> str:
     system, settles = answers.system, answers.equilibrium.level.typical
     if answers.draw_down.reaches_stop:
         return "starts at the stop level" if abs(system.start - system.stop) < 1e-9 * system.profile.height else ""
+    if answers.curve.ends == "surging" or answers.equilibrium.surges_at is not None:
+        return "surges about the inlet"
     if answers.curve.ends == "overflow" or settles is None:
         return ""
     gap = settles - system.stop
@@ -169,15 +212,9 @@ def _settling(answers: Answers) -> tuple[float, float] | None:
     return min(level.low, level.high), max(level.low, level.high)
 
 
-def _not_defended(answers: Answers) -> float | None:
-    reached = float(np.min(answers.curve.level))
-    for finding in answers.findings:
-        if finding.rule == "C17" and finding.grade.word == "Stop" and finding.limit is not None:
-            return finding.limit if finding.limit > reached else None
-    return None
-
-
 def _shaded(answers: Answers) -> str:
+    if any(not isinstance(outlet, OrificeOutlet) for outlet in answers.system.outlets):
+        return "shaded: the range of losses and coefficients"
     ranges = {(used.low, used.high) for used in answers.coefficients}
     if len(ranges) != 1:
         return "shaded: the coefficients’ ranges"

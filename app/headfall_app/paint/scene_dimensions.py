@@ -31,7 +31,8 @@ def size_lines(case: Case, outline: Outline, display: DisplayUnits, lit: Path | 
     """Return the vessel's dimension lines; a typed size shows its text as it was typed, a derived one its value."""
     lines = []
     for dimension in outline.dimensions:
-        path: Path = ("vessel", *dimension.field.split("."))
+        words = dimension.field.split(".")
+        path: Path = ("vessel", *(int(word) if word.isdigit() else word for word in words))
         typed = _typed(case, path) if dimension.typed else None
         if typed is None:
             length = math.dist(dimension.start, dimension.end)
@@ -41,8 +42,14 @@ def size_lines(case: Case, outline: Outline, display: DisplayUnits, lit: Path | 
     return tuple(lines)
 
 
+def _member(value: Any, part: str | int) -> Any:
+    if isinstance(part, int):
+        return value[part] if isinstance(value, tuple) and part < len(value) else None
+    return getattr(value, part, None)
+
+
 def _typed(case: Case, path: Path) -> Quantity | None:
     value: Any = case
     for part in path:
-        value = value[part] if isinstance(part, int) else getattr(value, part, None)
+        value = _member(value, part)
     return value if isinstance(value, Quantity) else None

@@ -7,7 +7,8 @@ from dataclasses import dataclass
 from PySide6.QtCore import QPointF
 from PySide6.QtGui import QPainter
 
-from headfall_app.paint import curve, flow, lettering
+from headfall_app.paint import curve, flow, lettering, loose
+from headfall_app.paint.around import paint_bodies, paint_lid, paint_receiver
 from headfall_app.paint.dimensions import paint_dimensions
 from headfall_app.paint.flags import paint_flags
 from headfall_app.paint.fonts import text_width
@@ -63,6 +64,7 @@ def paint_section(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, k
 
     paint_kept(kept, painter, "vessel", key, vessel_box(frame, 12), vessel, theme.colour("surface"))
     paint_liquid(painter, frame, scene, theme)
+    paint_bodies(painter, frame, scene, theme)
     paint_kept(kept, painter, "inner lines", key, vessel_box(frame, 16), inner_lines)
     ground = ground_line(frame, scene)
     if ground is not None:
@@ -70,7 +72,9 @@ def paint_section(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, k
     paint_stream(painter, frame, scene, theme)
     paint_section_levels(painter, frame, scene, theme)
     paint_dimensions(painter, frame, scene, theme, kept)
+    paint_receiver(painter, frame, scene, theme)
     paint_jets(painter, frame, scene, theme)
+    paint_lid(painter, frame, scene, theme)
 
 
 def ground_line(frame: Frame, scene: Scene) -> tuple[float, float] | None:
@@ -86,7 +90,7 @@ def ground_line(frame: Frame, scene: Scene) -> tuple[float, float] | None:
 def paint_plots(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, focused: bool = False) -> None:
     """Paint the level plot and the flow plot."""
     curve.paint_grid(painter, frame, scene, theme)
-    curve.paint_not_defended(painter, frame, scene, theme)
+    loose.paint_loose(painter, frame, scene, theme)
     curve.paint_range(painter, frame, scene, theme)
     paint_plot_levels(painter, frame, scene, theme)
     flow.paint_flow_grid(painter, frame, scene, theme)
@@ -94,8 +98,8 @@ def paint_plots(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, foc
     curve.paint_time_marks(painter, frame, theme)
     curve.paint_run(painter, frame, scene, theme)
     curve.paint_cursor(painter, frame, scene, theme)
-    curve.paint_not_defended_text(painter, frame, scene, theme)
-    curve.paint_remark(painter, frame, scene, theme)
+    words = loose.paint_loose_words(painter, frame, scene, theme)
+    curve.paint_remark(painter, frame, scene, theme, words)
     flow.paint_flow_title(painter, frame, scene, theme)
     curve.paint_arrival(painter, frame, scene, theme)
     curve.paint_cursor_dot(painter, frame, scene, theme, focused)
@@ -103,7 +107,7 @@ def paint_plots(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, foc
 
 def _titles(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
     ink, muted = theme.colour("ink"), theme.colour("muted")
-    lettering.write(painter, QPointF(2.0, TITLE_ROW), "Section, to scale", ink, 12, 600)
+    lettering.write(painter, QPointF(2.0, TITLE_ROW), scene.section_title, ink, 12, 600)
     if frame.plot is None:
         return
     left, _, right, _ = frame.plot

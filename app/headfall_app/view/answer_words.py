@@ -5,6 +5,9 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from headfall.answers import Answers, Figure
+from headfall.outlet.headspace import ClosedHeadspace
+from headfall.outlet.orifice import OrificeOutlet
+from headfall.outlet.pipe import PipeOutlet
 from headfall.quantities import DisplayUnits, duration, duration_parts
 
 
@@ -89,6 +92,10 @@ def _run(answers: Answers, display: DisplayUnits) -> Answer:
 
 def _rest(answers: Answers, display: DisplayUnits) -> Answer:
     rest, system = answers.equilibrium, answers.system
+    if rest.surges_at is not None:
+        full = display.text(rest.surging_flow or 0.0, "flow")
+        at = display.text(rest.surges_at, "level")
+        return Answer("Settles at", (("no steady level", True),), f"surges about {at}: {full} goes out when full")
     if rest.overflows or rest.level.typical is None:
         needed = rest.needed_level
         words = "above overflow" if needed is not None and needed <= system.profile.height else "above the top"
@@ -97,7 +104,16 @@ def _rest(answers: Answers, display: DisplayUnits) -> Answer:
     figure = _value(rest.level.typical, "level", display)
     if system.inflow > 0.0:
         return Answer("Settles at", figure, _range(rest.level, "level", display) or "the same over the whole range")
-    return Answer("Settles at", figure, "nothing flows in")
+    return Answer("Settles at", figure, _held_by(answers, display))
+
+
+def _held_by(answers: Answers, display: DisplayUnits) -> str:
+    """What keeps the level up where nothing flows in."""
+    if isinstance(answers.system.headspace, ClosedHeadspace) and answers.headspace is not None:
+        return f"held by {display.text(abs(answers.headspace.lowest), 'pressure')} of vacuum"
+    if answers.receiver_level is not None:
+        return "nothing flows in; the receiving vessel fills"
+    return "nothing flows in"
 
 
 def _outflow(answers: Answers, display: DisplayUnits) -> Answer:
@@ -107,18 +123,32 @@ def _outflow(answers: Answers, display: DisplayUnits) -> Answer:
 
 
 def _outlet_or_inflow(answers: Answers, display: DisplayUnits) -> Answer:
-    target = answers.case.target
     overflows = answers.curve.ends == "overflow"
-    if answers.sizing and not overflows and target is not None and target.drain_time is not None:
-        return _outlet(answers, f"Outlet for {target.drain_time.text}", display)
+    if answers.sizing and not (overflows and answers.sizing[0].target == "drain_time"):
+        return _outlet(answers, _asked(answers, display), display)
     largest = answers.equilibrium.largest_inflow
     name = "Largest inflow below overflow"
-    if largest.low is None:
+    if not largest.low:
         return Answer(name, (("none", True),), "no outlet drains at that level")
     under = "the same over the whole range"
     if largest.typical is not None and largest.typical != largest.low:
         under = f"to be sure; typically {display.text(largest.typical, 'flow')}"
     return Answer(name, _value(largest.low, "flow", display), under)
+
+
+def _asked(answers: Answers, display: DisplayUnits) -> str:
+    """The name of the size that is wanted: the outlet, pipe or weir for the first target."""
+    target, outlet = answers.case.target, answers.system.outlets[answers.system.first_drain]
+    kind = "Pipe" if isinstance(outlet, PipeOutlet) else "Outlet" if isinstance(outlet, OrificeOutlet) else "Weir"
+    wanted = answers.sizing[0].target
+    if target is None:
+        return f"{kind} for the target"
+    if wanted == "drain_time" and target.drain_time is not None:
+        return f"{kind} for {target.drain_time.text}"
+    if wanted == "highest_level" and target.highest_level is not None:
+        return f"{kind} for {target.highest_level.text} at most"
+    flow = target.flow_at.flow.text if target.flow_at is not None else ""
+    return f"{kind} for {flow} at most"
 
 
 def _outlet(answers: Answers, name: str, display: DisplayUnits) -> Answer:
@@ -138,11 +168,19 @@ def _outlet(answers: Answers, name: str, display: DisplayUnits) -> Answer:
 def _next_size(answers: Answers, display: DisplayUnits) -> str:
     sizing = answers.sizing[0]
     chosen = [one for one in sizing.neighbours if one.standard == sizing.standard]
-    larger = [one for one in sizing.neighbours if sizing.diameter.typical and one.diameter >= sizing.diameter.typical]
-    for one in (chosen or larger)[:1]:
-        if one.achieved_time.typical is not None:
-            return f"next size {display.text(one.diameter, 'bore')}: {duration(one.achieved_time.typical)}"
+    typical = sizing.diameter.typical or 0.0
+    beyond = [one for one in sizing.neighbours if (one.diameter >= typical) == (sizing.target != "flow_at")]
+    is_pipe = isinstance(answers.system.outlets[answers.system.first_drain], PipeOutlet)
+    for one in (chosen or beyond)[:1]:
+        if one.achieved.typical is not None:
+            kind = _ACHIEVED[sizing.target]
+            text = duration(one.achieved.typical) if kind == "time" else display.text(one.achieved.typical, kind)
+            size = one.standard if is_pipe else f"next size {display.text(one.diameter, 'bore')}"
+            return f"{size}: {text}"
     return f"next size {display.text(sizing.standard_diameter, 'bore')}" if sizing.standard_diameter else ""
+
+
+_ACHIEVED = {"drain_time": "time", "highest_level": "level", "flow_at": "flow"}
 
 
 def _room(answers: Answers, display: DisplayUnits) -> Answer:

@@ -14,10 +14,12 @@ _DISCRIMINATORS = ("shape", "form", "kind")
 class Attribute:
     """One attribute of a part: its name, its metadata, and the kinds of part it may hold (none for a plain value).
 
-    ``many`` is true for a list of parts.
+    ``key`` is its key in the file, which differs from the name where Python keeps the word for itself. ``many`` is
+    true for a list of parts.
     """
 
     name: str
+    key: str
     metadata: Mapping[str, Any]
     variants: tuple[type, ...]
     many: bool
@@ -28,21 +30,26 @@ class Attribute:
         wanted = self.metadata.get("default")
         for variant in self.variants:
             known = discriminator(variant)
-            if len(self.variants) == 1 and "coefficient" not in self.metadata:
+            if any(item.required for item in attributes_of(variant).values()):
+                continue
+            if len(self.variants) == 1 or (known is not None and known[1] == wanted):
                 return variant()
-            if known is not None and known[1] == wanted:
-                return variant()
-        raise LookupError(f"{self.name} has no part to begin with")
+        raise LookupError(f"{self.key} has no part to begin with")
 
 
 _READ: dict[type, Mapping[str, Attribute]] = {}
 
 
 def attributes_of(part: type) -> Mapping[str, Attribute]:
-    """Return the attributes of a dataclass of the model by name, in the order of the file."""
+    """Return the attributes of a dataclass of the model by their keys, in the order of the file."""
     if part not in _READ:
         _READ[part] = _attributes(part)
     return _READ[part]
+
+
+def field_of(key: str) -> str:
+    """Return the name of the dataclass's field for a key of the file: ``from_`` for ``from``, else the key itself."""
+    return f"{key}_" if key in _KEPT_BY_PYTHON else key
 
 
 def discriminator(part: type) -> tuple[str, str] | None:
@@ -54,16 +61,26 @@ def discriminator(part: type) -> tuple[str, str] | None:
     return None
 
 
+_KEPT_BY_PYTHON = ("from",)
+
+
 def _attributes(part: type) -> Mapping[str, Attribute]:
     hints = get_type_hints(part)
     found = {}
     for item in fields(part):
-        hint = hints[item.name]
-        is_list = get_origin(hint) is tuple and Ellipsis in get_args(hint)
+        key = next((word for word in _KEPT_BY_PYTHON if field_of(word) == item.name), item.name)
+        variants = _variants(hints[item.name])
         # The three parts without metadata and without a default are the ones that Case cannot do without.
         required = bool(item.metadata.get("required", item.default is not None))
-        found[item.name] = Attribute(item.name, item.metadata, _variants(hint), is_list, required)
+        many = bool(variants) and _is_list(hints[item.name])
+        found[key] = Attribute(item.name, key, item.metadata, variants, many, required)
     return found
+
+
+def _is_list(hint: object) -> bool:
+    if isinstance(hint, UnionType):
+        return any(_is_list(member) for member in get_args(hint))
+    return get_origin(hint) is tuple and Ellipsis in get_args(hint)
 
 
 def _variants(hint: object) -> tuple[type, ...]:

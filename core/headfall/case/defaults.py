@@ -6,7 +6,7 @@ from collections.abc import Mapping
 from dataclasses import fields
 from typing import Any
 
-from headfall.quantities import parse
+from headfall.case.typed_quantity import read_quantity
 
 _known: dict[type[Any], dict[str, Any]] = {}
 
@@ -21,7 +21,7 @@ def default_of(kind: type[Any], attribute: str) -> Any:
 def _default(metadata: Mapping[str, Any]) -> Any:
     default = metadata.get("default")
     if default is not None and "dimension" in metadata:
-        return parse(default, metadata["dimension"]).value
+        return read_quantity(default, metadata["dimension"]).value
     return default
 
 

@@ -16,10 +16,23 @@ _PLACES = {
     "levels.overflow": "Overflow level",
     "levels.high": "High alarm level",
     "inflow.rate": "Inflow",
+    "levels.site_datum": "Site datum",
     "target.drain_time": "Time to drain",
+    "target.highest_level": "Highest level",
     "liquid.name": "Liquid",
 }
 _ENDS_OF_DRUM = {0: "low head", 1: "high head"}
+_ONE_OF = {
+    "outlets": "outlet",
+    "fittings": "fitting",
+    "sections": "section",
+    "parts": "part",
+    "rows": "row",
+    "properties": "properties, row",
+    "displacement": "displacement",
+    "times": "time",
+    "also_at": "also at",
+}
 
 
 @dataclass(frozen=True, slots=True)
@@ -87,12 +100,12 @@ def place_words(path: Path) -> str:
     for before, key in zip(("", *path), path, strict=False):
         if not isinstance(key, int):
             words.append(key.replace("_", " "))
-        elif before == "outlets":
-            words[-1] = f"outlet {key + 1}"
+        elif before in _ONE_OF:
+            words[-1] = f"{_ONE_OF[before]} {key + 1}"
         elif before == "heads":
             words[-1] = _ENDS_OF_DRUM.get(key, f"head {key + 1}")
         else:
-            words.append(str(key + 1))
+            words.append(f"column {key + 1}" if isinstance(before, int) else str(key + 1))
     if "opening" in words[:-1]:
         words.remove("opening")
     said = ", ".join(words) or "the case"

@@ -50,8 +50,26 @@ def data_from_text(text: str) -> object:
 
 
 def text_from_data(data: dict[str, Any]) -> str:
-    """Return the text of a case file: two spaces of indent, letters as they are, a newline at the end."""
-    return json.dumps(data, indent=2, ensure_ascii=False, allow_nan=False) + "\n"
+    """Return the text of a case file: two spaces of indent, letters as they are, a newline at the end.
+
+    A list of plain values, such as a row of a table, stands on one line.
+    """
+    return _laid_out(data, "\n") + "\n"
+
+
+def _laid_out(value: Any, line: str) -> str:
+    """Return the text of a value; ``line`` begins a line with the indent that the value stands at."""
+    inner = f"{line}  "
+    if isinstance(value, dict) and value:
+        members = [f"{_plain(key)}: {_laid_out(member, inner)}" for key, member in value.items()]
+        return "{" + inner + f",{inner}".join(members) + line + "}"
+    if isinstance(value, list) and any(isinstance(member, dict | list) for member in value):
+        return "[" + inner + f",{inner}".join(_laid_out(member, inner) for member in value) + line + "]"
+    return _plain(value)
+
+
+def _plain(value: Any) -> str:
+    return json.dumps(value, ensure_ascii=False, allow_nan=False)
 
 
 def _integer(digits: str) -> int | float:

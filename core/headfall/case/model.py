@@ -1,231 +1,128 @@
-"""The case: what a person fills in, as one immutable value.
-
-Every attribute that the file may leave out is ``None`` when it was not typed; its default stands in the
-attribute's metadata (and is applied in ``headfall.system``), so that a case is written back just as it was read.
-
-Metadata of an attribute, read by ``reading`` and by the entry panels:
-
-``dimension``  the attribute is a text quantity of this dimension
-``sign``       ``positive``, ``not_negative`` or ``any``
-``default``    what counts when nothing was typed, as it would be typed
-``number``     the attribute is a plain number; with ``low`` and ``high`` (both allowed) or ``above`` (not allowed)
-``integer``    the attribute is a whole number
-``choices``    the attribute is one of these words
-``text``       the attribute is free text
-``end``        the attribute is the end of a vessel; with ``pair`` it may also be two of them
-``opening``    the attribute is an opening
-``coefficient`` the attribute is the word ``handbook`` or a range
-``tests``      the attribute is a list of field tests (empty until they are built)
-``required``   it must be present
-"""
+"""The case: what a person fills in, as one immutable value. ``metadata`` says what its attributes say of themselves."""
 
 from __future__ import annotations
 
 from dataclasses import dataclass, field
-from typing import Any, ClassVar
+from typing import ClassVar
 
+from headfall.case.metadata import Path, choice, number, quantities, quantity, rows, text
+from headfall.case.outlets import (
+    ENTRIES,
+    ROLES,
+    WEIRS,
+    CoefficientRange,
+    Fitting,
+    LossRange,
+    Opening,
+    Orifice,
+    Outlet,
+    Pipe,
+    PipeSection,
+    ReceivingVessel,
+    RectangularOpening,
+    RoundOpening,
+    Tailwater,
+    Valve,
+    Weir,
+)
+from headfall.case.vessels import (
+    Basin,
+    Box,
+    BoxFloor,
+    Cone,
+    ConeEnd,
+    Displacement,
+    Drum,
+    EllipsoidalEnd,
+    End,
+    FlatEnd,
+    Floor,
+    HemisphericalEnd,
+    SlopedFloor,
+    Sphere,
+    Stack,
+    StackPart,
+    TableVessel,
+    TorisphericalEnd,
+    UprightCylinder,
+    Vessel,
+)
 from headfall.quantities import Quantity
 
-Path = tuple[str | int, ...]
-"""Where something stands in a case: ``("outlets", 0, "opening", "diameter")``."""
-
-
-def _quantity(dimension: str, *, sign: str = "positive", default: str | None = None, required: bool = False) -> Any:
-    metadata = {"dimension": dimension, "sign": sign, "default": default, "required": required}
-    return field(default=None, metadata=metadata)
-
-
-def _number(*, default: float | None = None, required: bool = False, **bounds: float) -> Any:
-    return field(default=None, metadata={"number": True, "default": default, "required": required, **bounds})
-
-
-def _choice(*choices: str, default: str | None = None) -> Any:
-    return field(default=None, metadata={"choices": choices, "default": default, "required": default is None})
-
-
-def _text(default: str = "") -> Any:
-    return field(default=None, metadata={"text": True, "default": default, "required": False})
-
-
-# Ends of vessels ------------------------------------------------------------------------------------------------------
-
-
-@dataclass(frozen=True, slots=True)
-class FlatEnd:
-    """A flat floor or head."""
-
-    form: ClassVar[str] = "flat"
-
-
-@dataclass(frozen=True, slots=True)
-class ConeEnd:
-    """A conical floor or head of the given depth."""
-
-    form: ClassVar[str] = "cone"
-    depth: Quantity = _quantity("length", required=True)
-
-
-@dataclass(frozen=True, slots=True)
-class EllipsoidalEnd:
-    """Half an ellipsoid; ``ratio`` is inside diameter over twice the depth (2 for a 2:1 head)."""
-
-    form: ClassVar[str] = "ellipsoidal"
-    ratio: float | None = _number(default=2, above=0)
-
-
-@dataclass(frozen=True, slots=True)
-class TorisphericalEnd:
-    """A crown and a knuckle; both radii as fractions of the inside diameter."""
-
-    form: ClassVar[str] = "torispherical"
-    crown_ratio: float | None = _number(default=1, low=0.5)
-    knuckle_ratio: float | None = _number(default=0.06, above=0, high=0.5)
-
-
-@dataclass(frozen=True, slots=True)
-class HemisphericalEnd:
-    """Half a sphere."""
-
-    form: ClassVar[str] = "hemispherical"
-
-
-End = FlatEnd | ConeEnd | EllipsoidalEnd | TorisphericalEnd | HemisphericalEnd
-
-# Vessels --------------------------------------------------------------------------------------------------------------
-
-
-@dataclass(frozen=True, slots=True)
-class UprightCylinder:
-    """An upright cylinder: straight side on a floor. Levels count from the lowest inside point of the floor."""
-
-    shape: ClassVar[str] = "upright_cylinder"
-    diameter: Quantity = _quantity("length", required=True)
-    height: Quantity = _quantity("length", required=True)
-    floor: End | None = field(default=None, metadata={"end": True, "default": "flat"})
-
-
-@dataclass(frozen=True, slots=True)
-class Box:
-    """An upright box, open at the top."""
-
-    shape: ClassVar[str] = "box"
-    length: Quantity = _quantity("length", required=True)
-    width: Quantity = _quantity("length", required=True)
-    height: Quantity = _quantity("length", required=True)
-
-
-@dataclass(frozen=True, slots=True)
-class Cone:
-    """A cone or frustum, either way up; either diameter may be nil, not both."""
-
-    shape: ClassVar[str] = "cone"
-    top_diameter: Quantity = _quantity("length", sign="not_negative", required=True)
-    bottom_diameter: Quantity = _quantity("length", sign="not_negative", required=True)
-    height: Quantity = _quantity("length", required=True)
-
-
-@dataclass(frozen=True, slots=True)
-class Drum:
-    """A level lying drum; ``length`` runs from tangent line to tangent line."""
-
-    shape: ClassVar[str] = "drum"
-    diameter: Quantity = _quantity("length", required=True)
-    length: Quantity = _quantity("length", required=True)
-    heads: End | tuple[End, End] | None = field(default=None, metadata={"end": True, "pair": True, "default": "flat"})
-    fall: Quantity | None = _quantity("length", sign="not_negative", default="0 m")
-
-
-@dataclass(frozen=True, slots=True)
-class Sphere:
-    """A sphere."""
-
-    shape: ClassVar[str] = "sphere"
-    diameter: Quantity = _quantity("length", required=True)
-
-
-Vessel = UprightCylinder | Box | Cone | Drum | Sphere
-
-# Outlets --------------------------------------------------------------------------------------------------------------
-
-
-@dataclass(frozen=True, slots=True)
-class RoundOpening:
-    """A round opening."""
-
-    form: ClassVar[str] = "round"
-    diameter: Quantity = _quantity("length", required=True)
-
-
-@dataclass(frozen=True, slots=True)
-class RectangularOpening:
-    """A rectangular opening; on a downward opening ``height`` is simply the other side."""
-
-    form: ClassVar[str] = "rectangle"
-    width: Quantity = _quantity("length", required=True)
-    height: Quantity = _quantity("length", required=True)
-
-
-Opening = RoundOpening | RectangularOpening
-
-
-@dataclass(frozen=True, slots=True)
-class CoefficientRange:
-    """A discharge coefficient of one's own: lowest, typical and highest."""
-
-    low: float | None = _number(required=True, above=0, high=1.5)
-    typical: float | None = _number(required=True, above=0, high=1.5)
-    high: float | None = _number(required=True, above=0, high=1.5)
-
-
-ENTRIES = (
-    "sharp_edged",
-    "square_edged",
-    "thick_plate",
-    "rounded",
-    "bellmouth",
-    "short_tube",
-    "reentrant_free",
-    "reentrant_full",
-)
-
-
-@dataclass(frozen=True, slots=True)
-class Orifice:
-    """One or more alike openings in the wall (``side``) or in a horizontal plate (``down``).
-
-    ``elevation`` is the centre of a side opening and the plane of a downward one. ``thickness`` belongs to the
-    entries ``thick_plate`` and ``short_tube``, ``edge_radius`` to ``rounded``; no other entry takes them.
-    ``station`` is the distance from the low tangent line of a drum. ``blocked`` must be nil so far.
-    """
-
-    kind: ClassVar[str] = "orifice"
-    name: str | None = _text("drain")
-    entry: str | None = _choice(*ENTRIES, default="sharp_edged")
-    thickness: Quantity | None = _quantity("length")
-    edge_radius: Quantity | None = _quantity("length")
-    facing: str | None = _choice("down", "side", default="down")
-    opening: Opening = field(default=None, metadata={"opening": True, "required": True})  # type: ignore[assignment]
-    elevation: Quantity | None = _quantity("length", sign="not_negative", default="0 m")
-    station: Quantity | None = _quantity("length", sign="not_negative")
-    coefficient: str | CoefficientRange | None = field(
-        default=None, metadata={"coefficient": True, "default": "handbook"}
-    )
-    count: int | None = field(default=None, metadata={"integer": True, "low": 1, "high": 10000, "default": 1})
-    role: str | None = _choice("drain", default="drain")
-    blocked: float | None = _number(default=0, low=0, high=1)
-
-
-Outlet = Orifice
-
-# The rest -------------------------------------------------------------------------------------------------------------
+__all__ = [
+    "ENTRIES",
+    "ROLES",
+    "WEIRS",
+    "Basin",
+    "Box",
+    "BoxFloor",
+    "Case",
+    "ClosedHeadspace",
+    "CoefficientRange",
+    "Cone",
+    "ConeEnd",
+    "Displacement",
+    "Drum",
+    "EllipsoidalEnd",
+    "End",
+    "Fitting",
+    "FlatEnd",
+    "Floor",
+    "FlowAt",
+    "Headspace",
+    "HemisphericalEnd",
+    "Levels",
+    "Liquid",
+    "LossRange",
+    "OpenHeadspace",
+    "Opening",
+    "Orifice",
+    "Outlet",
+    "Path",
+    "Pipe",
+    "PipeSection",
+    "PressurisedHeadspace",
+    "ReceivingVessel",
+    "RectangularOpening",
+    "RoundOpening",
+    "SlopedFloor",
+    "Sphere",
+    "Stack",
+    "StackPart",
+    "SteadyInflow",
+    "Structure",
+    "Surroundings",
+    "TableVessel",
+    "Tables",
+    "Tailwater",
+    "Target",
+    "TorisphericalEnd",
+    "UprightCylinder",
+    "Valve",
+    "VentedHeadspace",
+    "Vessel",
+    "Weir",
+]
 
 
 @dataclass(frozen=True, slots=True)
 class Liquid:
-    """The liquid; only water is built so far."""
+    """The liquid: a built-in one by its name, or one of one's own.
 
-    name: str | None = _text("water")
-    temperature: Quantity | None = _quantity("temperature", sign="any", default="20 degC")
+    ``density`` and ``viscosity`` (dynamic or kinematic) describe one state; ``properties`` are rows of temperature,
+    density, viscosity and, if known, vapour pressure. ``also_at`` names temperatures at which the time is worked out
+    beside.
+    """
+
+    name: str | None = text("water")
+    temperature: Quantity | None = quantity("temperature", sign="any", default="20 degC")
+    density: Quantity | None = quantity("density")
+    viscosity: Quantity | None = quantity("dynamic_viscosity|kinematic_viscosity")
+    vapour_pressure: Quantity | None = quantity("pressure", sign="not_negative")
+    properties: tuple[tuple[Quantity, ...], ...] | None = rows(
+        "temperature", "density", "dynamic_viscosity|kinematic_viscosity", "pressure", least=3
+    )
+    also_at: tuple[Quantity, ...] | None = quantities("temperature")
 
 
 @dataclass(frozen=True, slots=True)
@@ -233,7 +130,7 @@ class SteadyInflow:
     """An inflow that does not change."""
 
     kind: ClassVar[str] = "steady"
-    rate: Quantity | None = _quantity("flow", sign="not_negative", default="0 L/s")
+    rate: Quantity | None = quantity("flow", sign="not_negative", default="0 L/s")
 
 
 @dataclass(frozen=True, slots=True)
@@ -244,38 +141,90 @@ class OpenHeadspace:
 
 
 @dataclass(frozen=True, slots=True)
-class Levels:
-    """Levels above the lowest inside point of the vessel. ``overflow`` defaults to the vessel's top."""
+class PressurisedHeadspace:
+    """A headspace kept at a gauge pressure; negative below atmospheric."""
 
-    start: Quantity = _quantity("length", sign="not_negative", required=True)
-    stop: Quantity = _quantity("length", sign="not_negative", required=True)
-    overflow: Quantity | None = _quantity("length", sign="positive")
-    high: Quantity | None = _quantity("length", sign="positive")
+    kind: ClassVar[str] = "pressurised"
+    gauge_pressure: Quantity = quantity("pressure", sign="any", required=True)
+
+
+@dataclass(frozen=True, slots=True)
+class ClosedHeadspace:
+    """A headspace without a way in for air; it is at atmospheric pressure at the start."""
+
+    kind: ClassVar[str] = "closed"
+
+
+@dataclass(frozen=True, slots=True)
+class VentedHeadspace:
+    """A headspace with one opening to the air."""
+
+    kind: ClassVar[str] = "vented"
+    bore: Quantity = quantity("bore", required=True)
+    coefficient: float | None = number(default=0.6, above=0, high=1)
+
+
+Headspace = OpenHeadspace | PressurisedHeadspace | ClosedHeadspace | VentedHeadspace
+
+
+@dataclass(frozen=True, slots=True)
+class Levels:
+    """Levels above the lowest inside point of the vessel. ``overflow`` defaults to the vessel's top.
+
+    A level may be typed as a height, as a percentage of the capacity, as a volume, or with the word ``site`` behind it
+    as a height on the site's datum, on which the lowest inside point stands at ``site_datum``. ``shown`` is how levels
+    are told beside their heights.
+    """
+
+    start: Quantity = quantity("level", sign="not_negative", required=True)
+    stop: Quantity = quantity("level", sign="not_negative", required=True)
+    overflow: Quantity | None = quantity("level", sign="positive")
+    high: Quantity | None = quantity("level", sign="positive")
+    site_datum: Quantity | None = quantity("length", sign="any")
+    shown: str | None = choice("height", "percent", "volume", "site", default="height")
+
+
+@dataclass(frozen=True, slots=True)
+class FlowAt:
+    """A flow that must not be passed at a level."""
+
+    level: Quantity = quantity("level", sign="positive", required=True)
+    flow: Quantity = quantity("flow", required=True)
 
 
 @dataclass(frozen=True, slots=True)
 class Target:
     """What is asked for."""
 
-    drain_time: Quantity | None = _quantity("time")
+    drain_time: Quantity | None = quantity("time")
+    highest_level: Quantity | None = quantity("level")
+    flow_at: FlowAt | None = None
+
+
+@dataclass(frozen=True, slots=True)
+class Tables:
+    """Tables asked for: the run at chosen times, and level, surface, volume and outflow at steps of level."""
+
+    times: tuple[Quantity, ...] | None = quantities("time")
+    level_step: Quantity | None = quantity("length")
 
 
 @dataclass(frozen=True, slots=True)
 class Structure:
     """What the shell and base screens need."""
 
-    shell_thickness: Quantity | None = _quantity("length")
-    allowable_stress: Quantity | None = _quantity("pressure")
-    joint_efficiency: float | None = _number(default=1, above=0, high=1)
-    empty_mass: Quantity | None = _quantity("mass", sign="not_negative")
+    shell_thickness: Quantity | None = quantity("length")
+    allowable_stress: Quantity | None = quantity("pressure")
+    joint_efficiency: float | None = number(default=1, above=0, high=1)
+    empty_mass: Quantity | None = quantity("mass", sign="not_negative")
 
 
 @dataclass(frozen=True, slots=True)
 class Surroundings:
     """Gravity and ambient pressure."""
 
-    gravity: Quantity | None = _quantity("acceleration", default="9.80665 m/s^2")
-    pressure: Quantity | None = _quantity("pressure", default="101.325 kPa")
+    gravity: Quantity | None = quantity("acceleration", default="9.80665 m/s^2")
+    pressure: Quantity | None = quantity("pressure", default="101.325 kPa")
 
 
 @dataclass(frozen=True, slots=True)
@@ -285,21 +234,22 @@ class Case:
     vessel: Vessel
     outlets: tuple[Outlet, ...]
     levels: Levels
-    title: str | None = _text()
-    tag: str | None = _text()
-    revision: str | None = _text()
-    status: str | None = _text("draft")
-    date: str | None = _text()
-    author: str | None = _text()
-    checker: str | None = _text()
-    approver: str | None = _text()
-    site: str | None = _text()
-    remarks: str | None = _text()
-    units: str | None = _choice("metric", "us", default="metric")
+    title: str | None = text()
+    tag: str | None = text()
+    revision: str | None = text()
+    status: str | None = text("draft")
+    date: str | None = text()
+    author: str | None = text()
+    checker: str | None = text()
+    approver: str | None = text()
+    site: str | None = text()
+    remarks: str | None = text()
+    units: str | None = choice("metric", "us", default="metric")
     liquid: Liquid | None = None
     inflow: SteadyInflow | None = None
-    headspace: OpenHeadspace | None = None
+    headspace: Headspace | None = None
     target: Target | None = None
+    tables: Tables | None = None
     structure: Structure | None = None
     surroundings: Surroundings | None = None
     field_tests: tuple[()] | None = field(default=None, metadata={"tests": True})

@@ -5,12 +5,14 @@ from __future__ import annotations
 import json
 import math
 from collections.abc import Mapping
-from dataclasses import replace
 from typing import Any
 
 from headfall.case.faults import CaseError, Fault
 from headfall.case.model import Path
-from headfall.quantities import Quantity, QuantityFault, parse
+from headfall.case.typed_quantity import read_quantity, wanted_quantity
+from headfall.quantities import Quantity, QuantityFault
+
+__all__ = ["either", "read_plain", "read_quantity", "shown", "wanted_of"]
 
 _LONGEST_SHOWN = 60
 
@@ -48,10 +50,7 @@ def read_plain(value: object, metadata: Mapping[str, Any], path: Path) -> Quanti
 def wanted_of(metadata: Mapping[str, Any]) -> str:
     """Return what to type for an attribute: ``a length, such as 80 mm``."""
     if "dimension" in metadata:
-        try:
-            parse("", metadata["dimension"])
-        except QuantityFault as fault:
-            return fault.wanted
+        return wanted_quantity(metadata["dimension"])
     if "choices" in metadata:
         return either(metadata["choices"])
     if "text" in metadata:
@@ -71,23 +70,9 @@ def _quantity(value: object, metadata: Mapping[str, Any], path: Path) -> Quantit
     if not isinstance(value, str):
         raise CaseError([Fault(path, f"{shown(value)} is not a quantity with its unit", wanted)])
     try:
-        quantity = parse(value, metadata["dimension"])
+        return read_quantity(value, metadata["dimension"], metadata.get("sign", "any"))
     except QuantityFault as fault:
         raise CaseError([Fault(path, fault.question or fault.found, fault.wanted)]) from None
-    text = quantity.text.strip()
-    if not math.isfinite(quantity.value):
-        raise CaseError([Fault(path, f"{text} is not finite", wanted)])
-    sign = metadata.get("sign", "any")
-    if quantity.value < 0 and sign != "any":
-        raise CaseError([Fault(path, f"{text} is negative", _signed(wanted, sign))])
-    if quantity.value == 0 and sign == "positive":
-        raise CaseError([Fault(path, f"{text} is nil", _signed(wanted, sign))])
-    return replace(quantity, text=value)
-
-
-def _signed(wanted: str, sign: str) -> str:
-    kind, comma, example = wanted.partition(",")
-    return f"{kind} {'above nil' if sign == 'positive' else 'of nil or more'}{comma}{example}"
 
 
 def _number(value: object, metadata: Mapping[str, Any], path: Path) -> int | float:

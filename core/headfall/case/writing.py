@@ -31,6 +31,7 @@ _ORDER = (
     "headspace",
     "levels",
     "target",
+    "tables",
     "structure",
     "surroundings",
     "field_tests",
@@ -61,10 +62,10 @@ def _as_data(value: Any) -> Any:
     if not is_dataclass(value):
         return value
     data: dict[str, Any] = {}
-    for name in attributes_of(type(value)):
-        member = getattr(value, name)
+    for key, attribute in attributes_of(type(value)).items():
+        member = getattr(value, attribute.name)
         if member is not None:
-            data[name] = _as_data(member)
+            data[key] = _as_data(member)
     word = discriminator(type(value))
     if word is None:
         return data

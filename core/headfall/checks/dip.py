@@ -55,27 +55,22 @@ def dip_level(flow_at: Callable[[Array], Array], *, facing: str, elevation: floa
 def check_dip(
     *,
     outlet: str,
-    facing: str,
-    elevation: float,
-    flow_at: Callable[[Array], Array],
+    level: float,
     lowest: float,
-    top: float,
-    gravity: float,
+    tolerance: float,
     display: DisplayUnits,
-    others_go_on: bool = False,
+    runs_dry: bool = False,
     place: str = "levels.stop",
 ) -> list[Finding]:
     """Return a stop where the run goes below the dip level of one outlet, an attention where it only passes it.
 
-    ``outlet`` is what the sentences call it, such as ``the outlet``; ``lowest`` the lowest level of the run [m],
-    ``top`` the top of the vessel [m]; the rest as for ``dip_level``, with the flow of the typical coefficient. The
-    finding's limit is the level below which the run is not defended [m]. ``others_go_on`` says that another outlet
-    draws from further below: where this one then runs dry, only the stretch above that is not defended, and it is an
-    attention. Source: ``lubin_springer_1967``.
+    ``outlet`` is what the sentences call it, such as ``the outlet``; ``level`` is the one that ``dip_level`` finds for
+    its typical flow [m], below which the run is not defended: the finding's limit; ``lowest`` the lowest level of the
+    run [m]; levels that differ by no more than ``tolerance`` [m] are equal. ``runs_dry`` says that this outlet passes
+    nothing there, while another one draws from further below: only the stretch above that is not defended then, and it
+    is an attention. Source: ``lubin_springer_1967``.
     """
-    level = dip_level(flow_at, facing=facing, elevation=elevation, top=top, gravity=gravity)
-    runs_dry = others_go_on and float(flow_at(np.array([lowest]))[0]) <= 0.0
-    grade, text, advice = _words(outlet, level, lowest, lowest < level - 1e-9 * top, runs_dry, display)
+    grade, text, advice = _words(outlet, level, lowest, lowest < level - tolerance, runs_dry, display)
     return [
         Finding(
             rule=RULE,

@@ -3,21 +3,22 @@
 from __future__ import annotations
 
 from headfall.checks.finding import Finding, Grade
+from headfall.checks.wording import edge_words
 from headfall.quantities.display import DisplayUnits
 
 RULE = "C31"
 
 
 def check_heel(
-    *, level: float, volume: float, facing: str, start: float, stop: float, display: DisplayUnits, place: str
+    *, level: float, volume: float, form: str, start: float, stop: float, display: DisplayUnits, place: str
 ) -> list[Finding]:
     """Return an attention where liquid stays below the lowest outlet and the run is to go down to it or further.
 
-    ``level`` is the lower edge of the lowest opening, for ``facing`` ``down`` its plane [m]; ``volume`` what stays
-    below it [m³]; ``start`` and ``stop`` of the run [m]; ``place`` the entry that sets the level, such as
-    ``outlets[0].elevation``. With a higher stop the rest is a note. Source: ``volume_balance``.
+    ``level`` is where the lowest outlet runs dry [m]: the plane of a ``down`` opening, the lower edge of a ``side``
+    one, the inlet of a ``pipe``, the discharging end of a ``rising_pipe``, the crest of a ``weir`` (``form``);
+    ``volume`` what stays below it [m³]; ``start`` and ``stop`` of the run [m]; ``place`` the entry that sets the level,
+    such as ``outlets[0].elevation``. With a higher stop the rest is a note. Source: ``volume_balance``.
     """
-    edge = "the outlet's plane" if facing == "down" else "the outlet's lower edge"
     where = display.text(level, "level")
     if volume <= 0.0:
         grade = Grade.NO_CAUTION
@@ -25,7 +26,7 @@ def check_heel(
         advice = "What clings to the wall or stands in pockets is not counted."
     else:
         grade = Grade.ATTENTION if stop <= min(level, start) else Grade.NOTE
-        text = f"{display.text(volume, 'volume')} stays below {edge}, {where}."
+        text = f"{display.text(volume, 'volume')} stays below {edge_words(form)}, {where}."
         advice = "No outlet draws it. Take it out another way, or set the outlet lower."
     return [
         Finding(

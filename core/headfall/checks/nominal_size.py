@@ -40,30 +40,29 @@ def nominal_size(diameter: float) -> NominalSize | None:
     return None
 
 
-def check_nominal_size(
-    *, outlet: str, entry: str, diameter: float | None, display: DisplayUnits, place: str
-) -> list[Finding]:
-    """Return a hint where an outlet's diameter [m] reads like a nominal pipe size; None stands for a rectangle.
+def is_made_of_pipe(entry: str) -> bool:
+    """Whether an orifice with that entry is commonly made of a piece of pipe: the tubes and nozzles."""
+    return bool(entry in read_resource("nominal_pipe.json")["pieces_of_pipe"])
 
-    ``outlet`` is what the sentences call it, such as ``the outlet``.
-    It is an attention for the entries that are commonly made of a piece of pipe (``pieces_of_pipe`` of
-    ``nominal_pipe.json``: tubes and nozzles), where the figure of the pipe and the bore are easily taken for one
-    another. A hole in a plate is drilled or cut to its figure, and 80 mm is then just 80 mm: there it is a note.
-    Source: ``asme_b36_10m``.
+
+def check_nominal_size(
+    *,
+    outlet: str,
+    made_of_pipe: bool,
+    diameter: float | None,
+    display: DisplayUnits,
+    place: str,
+    listed: str = "",
+) -> list[Finding]:
+    """Return a hint where an outlet's diameter or bore [m] reads like a nominal pipe size; None stands for a rectangle.
+
+    ``outlet`` is what the sentences call it, such as ``the outlet``; ``listed`` the name of the listed size that was
+    typed, empty where a figure was: a listed size brings its own bore and raises nothing.
+    It is an attention for a pipe and for the entries of an orifice that are ``made_of_pipe`` (see
+    ``is_made_of_pipe``), where the figure of the pipe and the bore are easily taken for one another. A hole in a plate
+    is drilled or cut to its figure, and 80 mm is then just 80 mm: there it is a note. Source: ``asme_b36_10m``.
     """
-    found = None if diameter is None else nominal_size(diameter)
-    if found is None:
-        what = "is not round" if diameter is None else "does not read like a nominal pipe size"
-        grade = Grade.NO_CAUTION
-        text = f"The opening of {outlet} {what}; no caution is raised by this check."
-        advice = "It rests on the sizes entered being those of the opening itself."
-    else:
-        made_of_pipe = entry in read_resource("nominal_pipe.json")["pieces_of_pipe"]
-        grade = Grade.ATTENTION if made_of_pipe else Grade.NOTE
-        inside = display.text(found.inside, "bore")
-        article = "an" if found.name.startswith("N") else "a"
-        text = f"{found.figure} is also a nominal size: {article} {found.name} pipe is {inside} inside in schedule 40."
-        advice = f"Enter the measured inside diameter of {outlet}; the flow goes with its square."
+    grade, text, advice = _words(outlet, made_of_pipe, diameter, listed, display)
     return [
         Finding(
             rule=RULE,
@@ -77,3 +76,24 @@ def check_nominal_size(
             place=place,
         )
     ]
+
+
+def _words(
+    outlet: str, made_of_pipe: bool, diameter: float | None, listed: str, display: DisplayUnits
+) -> tuple[Grade, str, str]:
+    if diameter is None:
+        text = f"The opening of {outlet} is not round; no caution is raised by this check."
+        return Grade.NO_CAUTION, text, "It rests on the sizes entered being those of the opening itself."
+    if listed:
+        inside = display.text(diameter, "bore")
+        text = f"{listed} is typed for {outlet}, {inside} inside; no caution is raised by this check."
+        return Grade.NO_CAUTION, text, "It rests on the listed wall: a worn or coated pipe has another bore."
+    found = nominal_size(diameter)
+    if found is None:
+        text = f"The opening of {outlet} does not read like a nominal pipe size; no caution is raised by this check."
+        return Grade.NO_CAUTION, text, "It rests on the sizes entered being those of the opening itself."
+    inside = display.text(found.inside, "bore")
+    article = "an" if found.name.startswith("N") else "a"
+    text = f"{found.figure} is also a nominal size: {article} {found.name} pipe is {inside} inside in schedule 40."
+    advice = f"Enter the measured inside diameter of {outlet}; the flow goes with its square."
+    return Grade.ATTENTION if made_of_pipe else Grade.NOTE, text, advice

@@ -59,7 +59,7 @@ def check_base_load(
         subject="pressure at the base",
         text=f"The lowest point carries {display.text(pressure, 'pressure')} of liquid at overflow and "
         f"{display.text(at_start, 'pressure')} at start; no limit is entered to compare with.",
-        advice=f"It rests on still liquid under an open headspace. {_DECIDES}",
+        advice=f"It rests on still liquid alone, without the gas above it. {_DECIDES}",
         source="hydrostatics",
         value=pressure,
         kind="pressure",
@@ -109,8 +109,9 @@ def check_hoop_stress(
     """Return the hoop screen of a cylinder, a drum or a sphere; not checked where the screen does not apply.
 
     ``shape`` and ``diameter`` [m] of the vessel (None where it has no one diameter); ``pressure`` at its lowest point
-    with liquid at overflow [Pa]; ``thickness`` of the shell [m] and ``allowable`` stress [Pa], None where not entered;
-    ``joint_efficiency`` [1]. Attention above 0.6 of the allowable stress. Source: ``thin_shell``.
+    with liquid at overflow, that of the gas included [Pa]; ``thickness`` of the shell [m] and ``allowable`` stress
+    [Pa], None where not entered; ``joint_efficiency`` [1]. Attention above 0.6 of the allowable stress.
+    Source: ``thin_shell``.
     """
     if shape not in ("upright_cylinder", "drum", "sphere") or diameter is None:
         form = {"box": "Flat walls need a plate calculation", "cone": "A conical shell needs a calculation of its own"}
@@ -166,7 +167,7 @@ def _compared(stress: float, allowable: float, display: DisplayUnits) -> Finding
         grade=grade,
         subject=_SHELL,
         text=text,
-        advice=f"A screen only: the liquid's pressure on a thin shell, without corrosion, wind, buckling, nozzles or "
+        advice=f"A screen only: the pressure inside on a thin shell, without corrosion, wind, buckling, nozzles or "
         f"supports. {_DECIDES}",
         source="thin_shell",
         value=stress,

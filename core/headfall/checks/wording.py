@@ -1,10 +1,19 @@
-"""Numbers as the findings' sentences print them."""
+"""Numbers and names as the findings' sentences print them."""
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from typing import Protocol
 
 from headfall.quantities.display import DisplayUnits
+
+_EDGES = {
+    "down": "the outlet's plane",
+    "side": "the outlet's lower edge",
+    "pipe": "the pipe's inlet",
+    "rising_pipe": "the pipe's discharging end",
+    "weir": "the crest",
+}
 
 
 class Ranged(Protocol):
@@ -44,3 +53,17 @@ def with_range(figure: Ranged, kind: str, display: DisplayUnits) -> str:
 def capital(sentence: str) -> str:
     """Return the sentence with a capital first letter, the rest untouched."""
     return sentence[:1].upper() + sentence[1:]
+
+
+def listed(names: Sequence[str]) -> str:
+    """Return ``a``, ``a and b`` or ``a, b and c``."""
+    return " and ".join(part for part in (", ".join(names[:-1]), *names[-1:]) if part)
+
+
+def edge_words(form: str) -> str:
+    """Return what the level stands at when an outlet runs dry.
+
+    ``form`` is ``down`` or ``side`` of an orifice, ``pipe``, ``rising_pipe`` (its discharging end is the higher one) or
+    ``weir``. Raises KeyError for another one.
+    """
+    return _EDGES[form]

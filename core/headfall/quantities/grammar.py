@@ -34,6 +34,9 @@ class Quantity:
 
 
 _LONGEST = 400
+BORE = "bore"
+"""A length that may also be typed as the name of a listed size, ``NPS 4 sch 40``."""
+_BORE_WANTED = "a bore, such as 102.26 mm or NPS 4 sch 40"
 
 
 def parse(text: str, dimension_name: str) -> Quantity:
@@ -44,7 +47,7 @@ def parse(text: str, dimension_name: str) -> Quantity:
     text
         A number and a unit: ``2,5 m``, ``3 1/8 in``, ``6' 2"``, ``22 min 5 s``, ``1:23:45``, ``-3 degC``.
     dimension_name
-        A key of the table of units: ``length``, ``flow`` and so on.
+        A key of the table of units: ``length``, ``flow`` and so on; or ``bore``, a length or the name of a listed size.
 
     Raises
     ------
@@ -53,6 +56,8 @@ def parse(text: str, dimension_name: str) -> Quantity:
     KeyError
         There is no such dimension.
     """
+    if dimension_name == BORE:
+        return _bore(text)
     wanted = dimension(dimension_name).wanted
     if not isinstance(text, str):
         raise QuantityFault(f"{_shown(text)} is not a text with a unit", wanted)
@@ -70,6 +75,20 @@ def parse(text: str, dimension_name: str) -> Quantity:
     if dimension_name == "temperature" and value < 0.0:
         raise QuantityFault(f"{tidy} lies below absolute zero", wanted)
     return Quantity(text, value, dimension_name, unit)
+
+
+def _bore(text: str) -> Quantity:
+    if isinstance(text, str):
+        from headfall.quantities.listed_bores import listed_bore
+
+        size = listed_bore(text)
+        if size is not None:
+            return Quantity(text, size.bore, "length", "mm")
+    try:
+        return parse(text, "length")
+    except QuantityFault as fault:
+        wanted = _BORE_WANTED if fault.wanted == dimension("length").wanted else fault.wanted
+        raise QuantityFault(fault.found, wanted, fault.question) from None
 
 
 def is_bare_number(text: str) -> bool:

@@ -3,8 +3,10 @@
 from __future__ import annotations
 
 from headfall.answers import Answers
+from headfall.case import model
+from headfall.outlet.headspace import OpenHeadspace
 from headfall.quantities import DisplayUnits
-from headfall.sheet.inputs import entry_words
+from headfall.sheet.input_outlets import entry_words
 from headfall.sheet.marks import unmarked
 from headfall.sheet.model import Column, Table
 from headfall.sheet.numbers import sentence
@@ -35,12 +37,15 @@ def _liquid(answers: Answers, display: DisplayUnits) -> Row:
     return (
         f"The liquid is clean {unmarked(state.name)} at {temperature}, free of gas and solids.",
         "as typed" if typed else "default",
-        "Density does not enter the time. A much thicker liquid, gas or solids lower the coefficient and lengthen it.",
+        "Gas or solids in it lower the coefficient and lengthen the time; so does a colder, thicker liquid.",
     )
 
 
 def _air(answers: Answers) -> Row:
     effect = "A shut or small vent stops the flow after a fall of centimetres and can pull the vessel in."
+    if not isinstance(answers.system.headspace, OpenHeadspace):
+        claim = "The headspace is as entered, its gas is ideal, and air comes in by nothing but what is entered."
+        return (claim, "stated in the case", effect)
     if answers.system.headspace_declared:
         return ("The headspace is open to the air and stays open.", "stated in the case", effect)
     claim = "The headspace is reckoned as open to the air; it was not declared."
@@ -50,11 +55,11 @@ def _air(answers: Answers) -> Row:
 def _vessel(answers: Answers) -> list[Row]:
     return [
         (
-            "All sizes of the vessel are inside sizes, free of coils, baffles and deposit.",
+            _SIZES[bool(answers.case.vessel.displacement)],
             "drawing, as typed",
             "The time goes with the volume: 1 % on a diameter is about 2 % on the time.",
         ),
-        _LYING if answers.case.vessel.shape == "drum" else _STANDING,
+        _how_it_stands(answers.case.vessel),
         (
             "Levels are above the lowest inside point of the vessel.",
             "datum of the case",
@@ -63,6 +68,28 @@ def _vessel(answers: Answers) -> list[Row]:
     ]
 
 
+_SIZES = {
+    False: "The sizes are those of the inside as entered, free of coils, baffles and deposit.",
+    True: "The sizes are those of the inside as entered, and nothing takes space but what is entered.",
+}
+
+
+def _how_it_stands(vessel: model.Vessel) -> Row:
+    if isinstance(vessel, model.Drum):
+        return _FALLING if vessel.fall is not None and vessel.fall.value > 0 else _LYING
+    return _TABLE if isinstance(vessel, model.TableVessel) else _STANDING
+
+
+_TABLE = (
+    "The table holds for the vessel as it is, between its rows as stated.",
+    "survey or strapping, as typed",
+    "Silt, a moved datum or the other rule between the rows changes volume and time.",
+)
+_FALLING = (
+    "The drum falls as entered, and levels count from its lowest inside point.",
+    "drawing, not surveyed",
+    "Another fall moves liquid from end to end: small for the time, large for what stays.",
+)
 _LYING = (
     "The drum lies level and is built to drawing.",
     "drawing, not surveyed",
@@ -78,6 +105,11 @@ _FREE = (
     "scope of the case",
     "A drowned or partly blocked opening passes less, and the time grows.",
 )
+_DROWNED = (
+    "The level outside is as entered, and a blocked part is as entered.",
+    "as typed",
+    "A higher tailwater or a blocked opening passes less, and the time grows.",
+)
 _APART = (
     "Openings stand three diameters apart or more.",
     "not checked against the drawing",
@@ -88,19 +120,29 @@ _APART = (
 def _outlets(answers: Answers) -> list[Row]:
     alike: dict[tuple[str, str, str], list[str]] = {}
     for outlet, used in zip(answers.case.outlets, answers.coefficients, strict=True):
-        if outlet.coefficient is None or isinstance(outlet.coefficient, str):
+        if isinstance(outlet, model.Pipe):
+            claim = (
+                "the line runs full from inlet to end, is built as entered and is clean; the ranges fit its fittings."
+            )
+            basis = "as typed and by handbook"
+            effect = "Losses not entered lengthen the run; a line that draws air or runs part-full passes less."
+        elif isinstance(outlet.coefficient, model.CoefficientRange):
+            claim = "the coefficient range given fits the outlet as built."
+            basis, effect = "given with the case", "The time goes with 1 over the coefficient."
+        elif isinstance(outlet, model.Weir):
+            claim = "the crest is level, sharp or broad as stated, clean, and air gets under the nappe."
+            basis, effect = "as typed", "A rough or drowned crest passes less, and the level stands higher."
+        else:
             claim = f"the entry edge is {entry_words(outlet.entry)} as stated, clean, nothing fitted behind it."
             basis = "as typed" if outlet.entry is not None else "default"
             effect = "An edge rounder than stated passes more, up to a third; a pipe or hose behind it changes the law."
-        else:
-            claim = "the coefficient range given fits the opening as built."
-            basis, effect = "given with the case", "The time goes with 1 over the coefficient."
         alike.setdefault((claim, basis, effect), []).append(unmarked(used.outlet))
     rows = [
         (sentence(f"{', '.join(names)}: {claim}"), basis, effect) for (claim, basis, effect), names in alike.items()
     ]
     several = len(answers.case.outlets) > 1 or any((outlet.count or 1) > 1 for outlet in answers.case.outlets)
-    return [*rows, _FREE, *([_APART] if several else [])]
+    drowned = any(outlet.tailwater is not None for outlet in answers.case.outlets)
+    return [*rows, _DROWNED if drowned else _FREE, *([_APART] if several else [])]
 
 
 def _flows(answers: Answers, display: DisplayUnits) -> list[Row]:

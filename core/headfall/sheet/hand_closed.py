@@ -8,7 +8,7 @@ from collections.abc import Callable
 import numpy as np
 
 from headfall.case.model import Cone, Drum, EllipsoidalEnd, End, FlatEnd, HemisphericalEnd, Sphere
-from headfall.sheet.hand_run import HandCalculation, HandRun
+from headfall.sheet.hand_run import HandCalculation, HandRun, open_area
 from headfall.sheet.marks import lowered, raised
 from headfall.sheet.numbers import figures, metres, rounded, seconds
 
@@ -37,7 +37,7 @@ def closed_form(run: HandRun) -> HandCalculation | None:
 def discharge_line(run: HandRun) -> tuple[str, float]:
     """Return the line for c = Σ C_d·a·√(2g) and its value as printed [m^2.5/s]."""
     root = rounded(math.sqrt(2 * run.gravity), 6)
-    terms = [(outlet.coefficient_typical, rounded(outlet.area, 6)) for outlet in run.outlets]
+    terms = [(outlet.coefficient_typical, rounded(open_area(outlet), 6)) for outlet in run.plain_openings]
     value = rounded(sum(coefficient * area for coefficient, area in terms) * root, 6)
     added = " + ".join(f"{coefficient:g} · {figures(area, 6)}" for coefficient, area in terms)
     if len(terms) > 1:

@@ -9,7 +9,9 @@ import numpy as np
 
 from headfall.answers import Answers
 from headfall.case.model import Case
+from headfall.discharge import Discharge
 from headfall.outlet.orifice import OrificeOutlet
+from headfall.outlet.outlet import TYPICAL, Outlet
 from headfall.sheet.model import Table
 from headfall.vessel.profile import Profile
 
@@ -20,7 +22,7 @@ class HandRun:
 
     case: Case
     profile: Profile
-    outlets: tuple[OrificeOutlet, ...]
+    flows: Discharge
     inflow: float
     gravity: float
     first: float
@@ -28,10 +30,21 @@ class HandRun:
     time: float
     goal: str
 
+    @property
+    def outlets(self) -> tuple[Outlet, ...]:
+        """All outlets."""
+        return self.flows.outlets
+
+    @property
+    def plain_openings(self) -> tuple[OrificeOutlet, ...]:
+        """The outlets where all are openings with a constant coefficient, discharging freely; nothing else."""
+        found = tuple(o for o in self.outlets if isinstance(o, OrificeOutlet) and o.is_plain)
+        return found if len(found) == len(self.outlets) and self.flows.is_free else ()
+
     def outflow(self, level: float) -> float:
         """Return the outflow of all outlets [m³/s] at the level [m]."""
-        here = np.array([level])
-        return sum(float(outlet.flow(here, outlet.coefficient_typical)[0]) for outlet in self.outlets)
+        rows = [row[:, [TYPICAL]] for row in self.flows.coefficients]
+        return float(self.flows.flow(np.array([level]), rows)[0])
 
     def volume(self, level: float) -> float:
         """Return the volume [m³] at the level [m]."""
@@ -40,8 +53,8 @@ class HandRun:
     @property
     def plane(self) -> float | None:
         """The one plane [m] in which all outlets lie, facing down; None where there is none, or a head would be nil."""
-        planes = {outlet.elevation for outlet in self.outlets}
-        if len(planes) > 1 or any(outlet.facing != "down" for outlet in self.outlets):
+        planes = {outlet.elevation for outlet in self.plain_openings}
+        if len(planes) != 1 or any(outlet.facing != "down" for outlet in self.plain_openings):
             return None
         plane = planes.pop()
         return plane if min(self.first, self.last) >= plane else None
@@ -49,8 +62,13 @@ class HandRun:
     @property
     def discharge(self) -> float:
         """Outflow over the root of the head, Σ C_d·a·√(2g) [m^2.5/s]."""
-        total = sum(outlet.coefficient_typical * outlet.area for outlet in self.outlets)
+        total = sum(outlet.coefficient_typical * open_area(outlet) for outlet in self.plain_openings)
         return total * math.sqrt(2 * self.gravity)
+
+
+def open_area(outlet: OrificeOutlet) -> float:
+    """Return the area [m²] that is not blocked."""
+    return outlet.area * (1 - outlet.blocked)
 
 
 @dataclass(frozen=True, slots=True)
@@ -72,5 +90,5 @@ def hand_run(answers: Answers) -> HandRun | None:
     else:
         return None
     return HandRun(
-        answers.case, system.profile, system.outlets, system.inflow, system.gravity, system.start, last, time, goal
+        answers.case, system.profile, system.discharge, system.inflow, system.gravity, system.start, last, time, goal
     )

@@ -36,7 +36,10 @@ def sizing_parts(answers: Answers, run: HandRun, calculation: HandCalculation, d
 
 
 def _line(run: HandRun, sizing: Sizing, target: float, calculation: HandCalculation) -> str:
-    outlet, scale = run.outlets[0], sizing.scale or 1.0
+    scale = sizing.scale or 1.0
+    if not run.plain_openings:
+        return _searched(sizing, target)
+    outlet = run.plain_openings[0]
     simple = len(run.outlets) == 1 and outlet.facing == "down"
     name, before = ("d", _D0) if outlet.shape == "round" else ("width", f"width{lowered('0')}")
     present, found = outlet.width, outlet.width * scale
@@ -51,17 +54,25 @@ def _line(run: HandRun, sizing: Sizing, target: float, calculation: HandCalculat
     return f"{text} {_redone(run, calculation, scale)}" if simple else text
 
 
+def _searched(sizing: Sizing, target: float) -> str:
+    """The size of what is not a plain opening: searched for, not redone here."""
+    if sizing.diameter.typical is None:
+        return f"Its size times {sizing.scale or 1.0:.4g}, found by trying until the run takes {seconds(target)} s."
+    bore = heavy(f"{figures(sizing.diameter.typical, _DIGITS)} m")
+    return f"d = {bore}, found by trying bores, lengths and losses kept, until the run takes {seconds(target)} s."
+
+
 def _redone(run: HandRun, calculation: HandCalculation, scale: float) -> str:
     """Return the check of the size found: the same calculation with every outflow times the square of the scale."""
-    present, found = rounded(run.outlets[0].width, _DIGITS), rounded(run.outlets[0].width * scale, _DIGITS)
+    present, found = (rounded(run.plain_openings[0].width * times, _DIGITS) for times in (1.0, scale))
     factor = rounded((found / present) ** 2, 5)
     squared = f"({figures(found, _DIGITS)}/{figures(present, _DIGITS)})² = {figures(factor, 5)}"
     if calculation.table is not None:
         again = summed_again(calculation.table, factor, rounded(run.inflow, 5))
         return f"Redo by hand: the strips above with every outflow times {squared} come to {seconds(again)} s."
-    outlet = run.outlets[0]
+    outlet = run.plain_openings[0]
     larger = replace(outlet, width=outlet.width * found / present, height=outlet.height * found / present)
-    closed = closed_form(replace(run, outlets=(larger,)))
+    closed = closed_form(replace(run, flows=replace(run.flows, outlets=(larger,))))
     if closed is None:
         return ""
     return f"Redo by hand: the lines above with c times {squared} come to {seconds(closed.seconds)} s."

@@ -26,7 +26,17 @@ def si_text(quantity: Quantity) -> str:
         return f"{figures(value / 1e6, 6)} MPa" if abs(value) >= 1e6 else f"{figures(value / 1e3, 6)} kPa"
     if quantity.dimension == "time":
         return f"{value:g} s"
-    units = {"flow": "m³/s", "mass": "kg", "acceleration": "m/s²"}
+    units = {
+        "flow": "m³/s",
+        "mass": "kg",
+        "acceleration": "m/s²",
+        "area": "m²",
+        "volume": "m³",
+        "density": "kg/m³",
+        "dynamic_viscosity": "Pa·s",
+        "kinematic_viscosity": "m²/s",
+        "angle": "rad",
+    }
     return f"{figures(value, 6 if quantity.dimension == 'acceleration' else 4)} {units[quantity.dimension]}"
 
 

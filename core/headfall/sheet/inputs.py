@@ -7,21 +7,17 @@ from dataclasses import fields
 import numpy as np
 
 from headfall.answers import Answers
-from headfall.case.model import CoefficientRange, Orifice, RoundOpening, Structure
+from headfall.case import model
+from headfall.case.defaults import effective
+from headfall.case.model import Structure
 from headfall.quantities import Quantity
 from headfall.sheet.citations import Citations
-from headfall.sheet.input_row import DEFAULT, NOTHING, TYPED, Row, row
+from headfall.sheet.input_outlets import outlet_rows
+from headfall.sheet.input_row import DEFAULT, NOTHING, TYPED, Row, row, si_text
 from headfall.sheet.input_vessel import vessel_rows
 from headfall.sheet.marks import unmarked
 from headfall.sheet.model import Column, Table
-from headfall.sheet.numbers import coefficient, figures, metres
-
-_ENTRY_WORDS = {
-    "sharp_edged": "sharp-edged",
-    "square_edged": "square-edged",
-    "reentrant_free": "re-entrant, running free",
-    "reentrant_full": "re-entrant, running full",
-}
+from headfall.sheet.numbers import figures, metres
 
 COLUMNS = (
     Column("Input", 1.25),
@@ -36,68 +32,32 @@ def inputs_table(answers: Answers, cite: Citations) -> Table:
     """Return every input and every default that the answers rest on."""
     rows = [*vessel_rows(answers), *_liquid(answers, cite)]
     for number in range(len(answers.case.outlets)):
-        rows += _outlet(answers, number, cite)
+        rows += outlet_rows(answers, number, cite)
     rows += [*_inflow(answers), *_levels(answers), *_rest(answers, cite)]
     return Table(COLUMNS, tuple(rows))
 
 
-def entry_words(entry: str | None) -> str:
-    """Return an outlet's entry as people write it; sharp-edged where none was typed."""
-    return _ENTRY_WORDS.get(entry or "sharp_edged") or str(entry).replace("_", " ")
-
-
 def _liquid(answers: Answers, cite: Citations) -> list[Row]:
     liquid, state = answers.case.liquid, answers.system.liquid
-    temperature = None if liquid is None else liquid.temperature
     density, viscosity = figures(state.density), figures(state.viscosity * 1000, 5)
     properties = f"density {density} kg/m³, viscosity {viscosity} mPa·s {cite(state.source)}"
-    return [
-        ("Liquid", NOTHING, "water", DEFAULT, properties)
-        if liquid is None or liquid.name is None
-        else ("Liquid", unmarked(liquid.name), "", TYPED, properties),
-        row("Temperature", temperature, "293.15 K"),
-    ]
-
-
-def _outlet(answers: Answers, number: int, cite: Citations) -> list[Row]:
-    typed, outlet = answers.case.outlets[number], answers.system.outlets[number]
-    used = answers.coefficients[number]
-    label = f"Outlet {number + 1}"
-    facing = "faces the side" if outlet.facing == "side" else "faces down"
-    entry = entry_words(typed.entry)
-    facing += "" if typed.facing is not None else " (default)"
-    name = f"{label}, {unmarked(outlet.name)}"
-    rows: list[Row] = [(name, f"{entry} orifice", "", TYPED, facing)]
-    if typed.entry is None:
-        rows = [(name, NOTHING, f"{entry} orifice", DEFAULT, facing)]
-    rows += _opening(label, typed, outlet.area, outlet.count)
-    level_of = "its centre" if outlet.facing == "side" else "its plane"
-    rows.append(row(f"{label}, elevation", typed.elevation, "0 m", f"height of {level_of}"))
-    further = {"station": typed.station, "plate thickness": typed.thickness, "edge radius": typed.edge_radius}
-    for name, quantity in further.items():
-        if quantity is not None:
-            rows.append(row(f"{label}, {name}", quantity))
-    spread = " / ".join(coefficient(value) for value in (used.low, used.typical, used.high))
-    own = isinstance(typed.coefficient, CoefficientRange)
-    follows = f"lowest / typical / highest {cite(used.source)}"
-    given = "own range" if own else "handbook"
-    basis = TYPED
-    if typed.coefficient is None:
-        given, basis, follows = NOTHING, DEFAULT, f"handbook: {follows}"
-    rows.append((f"{label}, coefficient", given, spread, basis, follows))
+    if liquid is None or liquid.name is None:
+        rows: list[Row] = [("Liquid", NOTHING, "water", DEFAULT, properties)]
+    else:
+        rows = [("Liquid", unmarked(liquid.name), "", TYPED, properties)]
+    if liquid is None:
+        return [*rows, row("Temperature", None, "293.15 K")]
+    rows.append(row("Temperature", liquid.temperature, "293.15 K"))
+    own = {"Density": liquid.density, "Viscosity": liquid.viscosity, "Vapour pressure": liquid.vapour_pressure}
+    rows += [row(name, value) for name, value in own.items() if value is not None]
+    for properties_row in liquid.properties or ():
+        cells = ", ".join(unmarked(cell.text) for cell in properties_row)
+        rows.append(
+            ("Liquid, card", cells, "", TYPED, "temperature, density, viscosity and, if given, vapour pressure")
+        )
+    if liquid.also_at:
+        rows.append(("Also worked out at", ", ".join(unmarked(t.text) for t in liquid.also_at), "", TYPED, ""))
     return rows
-
-
-def _opening(label: str, typed: Orifice, area: float, count: int) -> list[Row]:
-    opening = typed.opening
-    alike = f"{count} alike openings, " if count > 1 else ""
-    follows = f"{alike}area {figures(area, 5)} m²"
-    if isinstance(opening, RoundOpening):
-        return [row(f"{label}, diameter", opening.diameter, follows=follows)]
-    return [
-        row(f"{label}, width", opening.width),
-        row(f"{label}, height", opening.height, follows=follows),
-    ]
 
 
 def _inflow(answers: Answers) -> list[Row]:
@@ -110,24 +70,40 @@ def _levels(answers: Answers) -> list[Row]:
     overflow = f"{metres(system.overflow)} m"
     top = "" if levels.overflow is not None else "the vessel's top; "
     rows = [
-        row("Start level", levels.start, follows=f"volume {figures(vessel.start_volume)} m³"),
-        row("Stop level", levels.stop, follows=f"volume {figures(vessel.stop_volume)} m³"),
-        row("Overflow level", levels.overflow, overflow, f"{top}volume {figures(vessel.overflow_volume)} m³"),
+        _level("Start level", levels.start, system.start, vessel.start_volume),
+        _level("Stop level", levels.stop, system.stop, vessel.stop_volume),
     ]
-    if levels.high is not None:
-        volume = float(answers.system.profile.volume(np.array(levels.high.value)))
-        rows.append(row("High level", levels.high, follows=f"volume {figures(volume)} m³"))
+    if levels.overflow is None:
+        follows = f"{top}volume {figures(vessel.overflow_volume)} m³"
+        rows.append(row("Overflow level", None, overflow, follows))
+    else:
+        rows.append(_level("Overflow level", levels.overflow, system.overflow, vessel.overflow_volume))
+    if levels.high is not None and system.high is not None:
+        volume = float(system.profile.volume(np.array(system.high)))
+        rows.append(_level("High level", levels.high, system.high, volume))
+    if levels.site_datum is not None:
+        rows.append(row("Site datum", levels.site_datum, follows="where the lowest inside point stands on it"))
     return rows
+
+
+def _level(name: str, typed: Quantity, height: float, volume: float) -> Row:
+    """A level as typed, a height, a percentage, a volume or on the site datum, and its height."""
+    text = f"{metres(height)} m" if typed.dimension != "length" else si_text(typed)
+    return (name, unmarked(typed.text), text, TYPED, f"volume {figures(volume)} m³")
 
 
 def _rest(answers: Answers, cite: Citations) -> list[Row]:
     case, system = answers.case, answers.system
-    declared = system.headspace_declared
-    rows: list[Row] = [("Headspace", NOTHING, "", DEFAULT, "not declared: reckoned as open to the air")]
-    if declared:
-        rows = [("Headspace", "open", "", TYPED, "")]
-    if case.target is not None and case.target.drain_time is not None:
-        rows.append(row("Drain time wanted", case.target.drain_time))
+    rows = _headspace(case.headspace)
+    target = case.target or model.Target()
+    if target.drain_time is not None:
+        rows.append(row("Drain time wanted", target.drain_time))
+    if target.highest_level is not None and system.highest_level is not None:
+        volume = float(system.profile.volume(np.array(system.highest_level)))
+        rows.append(_level("Highest level wanted", target.highest_level, system.highest_level, volume))
+    if target.flow_at is not None and system.flow_limit is not None:
+        at = f"at {unmarked(target.flow_at.level.text)} ({metres(system.flow_limit.level)} m)"
+        rows.append(row("Largest flow wanted", target.flow_at.flow, follows=at))
     if case.structure is not None:
         rows += _structure(case.structure)
     around = case.surroundings
@@ -136,6 +112,20 @@ def _rest(answers: Answers, cite: Citations) -> list[Row]:
     standard = f"standard acceleration {cite('cgpm_1901')}" if gravity is None else ""
     rows.append(row("Gravity", gravity, "9.80665 m/s²", standard))
     rows.append(row("Air pressure", pressure, "101.325 kPa"))
+    return rows
+
+
+def _headspace(headspace: model.Headspace | None) -> list[Row]:
+    if headspace is None:
+        return [("Headspace", NOTHING, "", DEFAULT, "not declared: reckoned as open to the air")]
+    rows: list[Row] = [("Headspace", headspace.kind, "", TYPED, "")]
+    if isinstance(headspace, model.PressurisedHeadspace):
+        rows.append(row("Gauge pressure", headspace.gauge_pressure))
+    if isinstance(headspace, model.VentedHeadspace):
+        rows.append(row("Vent, bore", headspace.bore))
+        given = "" if headspace.coefficient is None else f"{headspace.coefficient:g}"
+        used = f"{effective(headspace, 'coefficient'):g}"
+        rows.append(("Vent, coefficient", given or NOTHING, used, TYPED if given else DEFAULT, ""))
     return rows
 
 

@@ -10,10 +10,10 @@ STATEMENT = (
     "or a discharge to the environment."
 )
 LIMITS = (
-    "The range covers the discharge coefficient alone: not the bore, the sizes of the vessel, the datum of the level, "
-    "a blocked opening or a fault of the feed.",
-    "Not covered: pipes and valves behind the opening, closed or vented headspaces, submerged outlets, changing "
-    "inflow, swirl and drawn-in air beyond the checks, freezing, boiling, foam and solids.",
+    "The range covers discharge coefficients, losses, roughness and the bounds of the transition: not the bore, the "
+    "sizes of the vessel, the datum of the level, a blocked opening or a fault of the feed.",
+    "Not covered: changing inflow, moving valves, lines that run part-full or gulp air, swirl and drawn-in air beyond "
+    "the checks, pressure along the line, freezing, boiling, foam and solids.",
     "Who decides: strength of the vessel and its supports, the vessel’s designer and the inspector; venting, process "
     "safety; entry, the site’s permit system; discharge, the owner and the regulator. Local codes and licensed "
     "practice come before anything printed here. The engineer who signs answers for the inputs and for the use made "

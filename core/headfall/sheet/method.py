@@ -5,6 +5,7 @@ from __future__ import annotations
 import math
 
 from headfall.answers import Answers
+from headfall.outlet.orifice import OrificeOutlet
 from headfall.quantities import DisplayUnits, duration
 from headfall.sheet.citations import Citations
 from headfall.sheet.hand_closed import closed_form
@@ -62,7 +63,7 @@ def _time(run: HandRun, calculation: HandCalculation, cite: Citations) -> list[P
     ]
     if calculation.table is not None:
         parts.append(Paragraph(f"Volume {volume_law(run.case.vessel)}", "lead"))
-        if any(outlet.facing == "side" for outlet in run.outlets):
+        if any(isinstance(outlet, OrificeOutlet) and outlet.facing == "side" for outlet in run.outlets):
             near = f"Outflow of a side opening by the integral {cite('opening_integral')}, which counts near its edge."
             parts.append(Paragraph(near, "lead"))
         parts += [Paragraph(calculation.lines[0], "lead"), calculation.table]
@@ -85,9 +86,10 @@ def _range(answers: Answers, run: HandRun) -> list[Part]:
     if time.low is None or time.high is None:
         return []
     reach = f"{seconds(time.low)} s to {seconds(time.high)} s"
-    text = f"Range: {reach}, the same with the other ends of the coefficient range"
+    over = "the coefficient range" if run.plain_openings else "the ranges of coefficients, losses and roughness"
+    text = f"Range: {reach}, the same with the other ends of {over}"
     used = answers.coefficients
-    if run.inflow == 0 and len(used) == 1:
+    if run.inflow == 0 and len(used) == 1 and run.plain_openings:
         low, typical, high = (coefficient(value) for value in (used[0].low, used[0].typical, used[0].high))
         text += f": t · {typical}/{high} and t · {typical}/{low}, since with no inflow the time goes with 1/{_CD}"
     return [Paragraph(f"{text}.")]

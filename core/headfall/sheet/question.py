@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from headfall.answers import Answers, Figure, Neighbour, Sizing
-from headfall.case.model import RoundOpening
+from headfall.case.model import Pipe, RoundOpening, Weir
 from headfall.quantities import DisplayUnits, duration
 from headfall.sheet.marks import unmarked
 from headfall.sheet.model import AnswerBox, Paragraph, Part
@@ -34,10 +34,12 @@ def range_text(figure: Figure, display: DisplayUnits, kind: str) -> str:
 
 def coefficient_range(answers: Answers) -> str:
     """Return the words for the coefficients the range is over."""
+    if any(isinstance(outlet, Pipe) for outlet in answers.case.outlets):
+        return "over the ranges of losses, roughness and coefficients"
     spans = {f"{coefficient(used.low)} to {coefficient(used.high)}" for used in answers.coefficients}
     if len(spans) == 1:
         return f"over coefficients {spans.pop()}"
-    return "over the coefficients of all outlets"
+    return "over the ranges of all outlets"
 
 
 def _question(answers: Answers, display: DisplayUnits) -> str:
@@ -70,6 +72,8 @@ def _rest(answers: Answers, display: DisplayUnits) -> str:
 
 def _requirement(answers: Answers, display: DisplayUnits) -> str:
     target = answers.system.drain_time
+    if target is None and answers.sizing:
+        return ""
     if target is None:
         return "No drain time was asked for, so nothing is judged met or not met."
     time = answers.draw_down.time
@@ -93,10 +97,15 @@ def wanted_time(answers: Answers) -> str:
 
 
 def _size_as_typed(answers: Answers) -> str:
-    opening = answers.case.outlets[0].opening
+    outlet = answers.case.outlets[answers.system.first_drain]
+    if isinstance(outlet, Pipe):
+        return unmarked(outlet.bore.text)
+    if isinstance(outlet, Weir):
+        return f"{unmarked(outlet.name or 'the weir')} as it is"
+    opening = outlet.opening
     if isinstance(opening, RoundOpening):
-        return opening.diameter.text
-    return f"{opening.width.text} × {opening.height.text}"
+        return unmarked(opening.diameter.text)
+    return f"{unmarked(opening.width.text)} × {unmarked(opening.height.text)}"
 
 
 def _next_size(answers: Answers, display: DisplayUnits) -> str:
@@ -119,18 +128,30 @@ def _sized(sizing: Sizing, display: DisplayUnits) -> str:
     if sizing.reason:
         return sentence(sizing.reason)
     listed = listed_neighbour(sizing)
-    if sizing.standard and listed is not None and listed.achieved_time.typical is not None:
-        reach = range_text(listed.achieved_time, display, "time")
+    exact = "" if sizing.diameter.typical is None else f"Bore for it: {display.text(sizing.diameter.typical, 'bore')}"
+    if sizing.standard and listed is not None and listed.achieved.typical is not None:
+        reach = range_text(listed.achieved, display, ACHIEVED[sizing.target])
+        most = "largest" if sizing.target == "flow_at" else "smallest"
+        verb = {"drain_time": "takes", "highest_level": "rests at", "flow_at": "passes"}[sizing.target]
         return (
-            f"The smallest listed size that meets it over the whole range, {sizing.standard}, takes "
-            f"{duration(listed.achieved_time.typical)} ({reach})."
+            f"{exact}. The {most} listed size that meets it over the whole range, {sizing.standard}, {verb} "
+            f"{_achieved(listed.achieved.typical, sizing.target, display)} ({reach})."
         )
-    if sizing.diameter.typical is not None:
-        bore = display.text(sizing.diameter.typical, "bore")
-        return f"Bore for it: {bore}; no listed size meets it over the whole range."
+    if exact and sizing.standard:
+        return f"{exact}; listed: {sizing.standard}."
+    if exact:
+        return f"{exact}; no listed size meets it over the whole range."
     if sizing.scale is not None:
         return f"Both sides of the opening times {sizing.scale:.3f} would meet it at the typical coefficient."
     return ""
+
+
+ACHIEVED = {"drain_time": "time", "highest_level": "level", "flow_at": "flow"}
+"""The display kind of what a size achieves, by the target."""
+
+
+def _achieved(value: float, target: str, display: DisplayUnits) -> str:
+    return duration(value) if target == "drain_time" else display.text(value, ACHIEVED[target])
 
 
 def listed_neighbour(sizing: Sizing) -> Neighbour | None:
@@ -149,9 +170,46 @@ def _further(answers: Answers, display: DisplayUnits) -> list[str]:
         lines.append(
             f"{flow}; released until the stop {display.text(run.released, 'volume')}." if run.released else f"{flow}."
         )
+    lines += _other_targets(answers, display)
+    if rest.surges_at is not None and run.reaches_stop:
+        lines.append(f"With the inflow kept up there is {rest.reason}.")
+    lines += _gas_and_receiver(answers, display)
     if rest.overflows:
         lines.append(sentence(rest.reason) or "With this inflow the vessel overflows.")
     elif rest.level.typical is not None and run.reaches_stop and answers.system.inflow > 0:
         text = display.text(rest.level.typical, "level")
         lines.append(f"With the inflow kept up it would settle at {text} ({range_text(rest.level, display, 'level')}).")
+    return lines
+
+
+def _other_targets(answers: Answers, display: DisplayUnits) -> list[str]:
+    """The targets for the highest level and for the flow at a level."""
+    lines = []
+    target = answers.case.target
+    for sizing in answers.sizing:
+        if target is None or sizing.target == "drain_time":
+            continue
+        if sizing.target == "highest_level" and target.highest_level is not None:
+            wanted = f"Wanted: no level above {unmarked(target.highest_level.text)}."
+        elif target.flow_at is not None:
+            limit = target.flow_at
+            wanted = f"Wanted: no more than {unmarked(limit.flow.text)} at {unmarked(limit.level.text)}."
+        lines.append(f"{wanted} {_sized(sizing, display)}".rstrip())
+    return lines
+
+
+def _gas_and_receiver(answers: Answers, display: DisplayUnits) -> list[str]:
+    lines = []
+    if answers.headspace is not None and answers.headspace.lowest < 0:
+        vacuum = display.text(-answers.headspace.lowest, "pressure")
+        level = display.text(answers.headspace.lowest_level, "level")
+        lines.append(f"The headspace falls to {vacuum} below atmospheric, at {level}.")
+    if answers.receiver_level is not None:
+        lines.append(f"The receiving vessel then stands at {display.text(answers.receiver_level, 'level')}.")
+    for warm in answers.at_temperatures:
+        at = display.text(warm.temperature, "temperature")
+        took = (
+            "the stop level is not reached" if warm.time.typical is None else f"it takes {duration(warm.time.typical)}"
+        )
+        lines.append(f"At {at} {took}.")
     return lines

@@ -6,17 +6,23 @@ import math
 
 import numpy as np
 
-from headfall.answers import Answers, Curve
+from headfall.answers import Answers, Curve, Neighbour, Sizing
+from headfall.outlet.orifice import OrificeOutlet
+from headfall.outlet.outlet import TYPICAL, Outlet
+from headfall.outlet.pipe import PipeOutlet
 from headfall.quantities import DisplayUnits, duration
+from headfall.sheet.further_tables import doubtful_text, further_tables, is_doubtful
+from headfall.sheet.marks import unmarked
+from headfall.sheet.method_headspace import conditions_at
 from headfall.sheet.model import Column, Paragraph, Part, Table
 from headfall.sheet.numbers import figures, fixed, sentence
-from headfall.sheet.question import range_text, wanted_time
+from headfall.sheet.question import ACHIEVED, range_text, wanted_time
 
 NO_VALUE = "–"
 
 
 def results_parts(answers: Answers, display: DisplayUnits) -> tuple[Part, ...]:
-    """Return the table of the run."""
+    """Return the table of the run, and beside it what else was asked for: times, stages, temperatures."""
     outlet = answers.system.outlets[0]
     several = len(answers.system.outlets) > 1
     units = {kind: display.unit(kind) for kind in ("level", "volume", "area", "flow", "velocity")}
@@ -38,11 +44,30 @@ def results_parts(answers: Answers, display: DisplayUnits) -> tuple[Part, ...]:
     rows = tuple(_row(answers, display, level) for level in round_levels(answers, display))
     which = f" of {outlet.name}, the first outlet" if several else ""
     note = (
-        f"Typical coefficient. Head{which}: level above its {'centre' if outlet.facing == 'side' else 'plane'}. "
-        "Net: outflow less inflow. Velocity: flow over the full area of the opening. "
-        "Range: over the coefficients."
+        f"Typical coefficient. Head{which}: {_head_words(outlet)}. Net: outflow less inflow. "
+        f"Velocity: {_velocity_words(outlet)}. Range: {_range_words(answers)}."
     )
-    return (Table(columns, rows), Paragraph(note, "small"))
+    parts: list[Part] = [Table(columns, rows), Paragraph(note, "small")]
+    if answers.doubtful:
+        parts.append(Paragraph(doubtful_text(answers, display), "small"))
+    return (*parts, *further_tables(answers, display))
+
+
+def _head_words(outlet: Outlet) -> str:
+    if isinstance(outlet, OrificeOutlet):
+        return f"level above its {'centre' if outlet.facing == 'side' else 'plane'}"
+    return "down to its discharging end" if isinstance(outlet, PipeOutlet) else "level above its crest"
+
+
+def _velocity_words(outlet: Outlet) -> str:
+    if isinstance(outlet, PipeOutlet):
+        return "in the first bore"
+    return "flow over the full area of the opening" if outlet.area else "none for a weir"
+
+
+def _range_words(answers: Answers) -> str:
+    pipes = any(isinstance(outlet, PipeOutlet) for outlet in answers.system.outlets)
+    return "over losses, roughness and coefficients" if pipes else "over the coefficients"
 
 
 def round_levels(answers: Answers, display: DisplayUnits) -> tuple[float, ...]:
@@ -67,20 +92,23 @@ def _round_step(least: float) -> float:
 def _row(answers: Answers, display: DisplayUnits, level: float) -> tuple[str, ...]:
     system = answers.system
     here = np.array([level])
-    flows = [float(outlet.flow(here, outlet.coefficient_typical)[0]) for outlet in system.outlets]
+    rows = [row[:, [TYPICAL]] for row in system.discharge.coefficients]
+    flows = [float(flow[0]) for flow in system.discharge.each(here, rows)]
     first = system.outlets[0]
+    head = first.head(level, conditions_at(answers, level)[0])
+    mark = " *" if is_doubtful(answers, level) else ""
     time = _time_at(answers.curve, level)
     reached = [_time_at(curve, level) for curve in (answers.curve_high, answers.curve_low)]
     ends = [fixed(end, 0) for end in sorted(end for end in reached if end is not None)]
     reach = " to ".join([*ends, "never", "never"][:2])
     return (
-        display.number(level, "level"),
+        display.number(level, "level") + mark,
         display.number(float(system.profile.volume(here)[0]), "volume"),
         display.number(float(system.profile.plan_area(here)[0]), "area"),
-        display.number(max(0.0, level - first.elevation), "level"),
+        display.number(head, "level"),
         display.number(sum(flows), "flow"),
         display.number(sum(flows) - system.inflow, "flow"),
-        display.number(flows[0] / first.area, "velocity"),
+        display.number(flows[0] / first.area, "velocity") if first.area else NO_VALUE,
         NO_VALUE if time is None else "0" if time == 0 else _whole_seconds(time),
         NO_VALUE if time is None else duration(time),
         reach,
@@ -103,35 +131,55 @@ def _time_at(curve: Curve, level: float) -> float | None:
 
 
 def sizes_parts(answers: Answers, display: DisplayUnits) -> tuple[Part, ...]:
-    """Return the listed sizes on both sides of the one wanted, with what each achieves."""
-    target = answers.system.drain_time
-    if target is None or not answers.sizing:
+    """Return the listed sizes on both sides of the one wanted, with what each achieves, for every target."""
+    if not answers.sizing:
         return (Paragraph("No drain time was asked for, so no size was looked for."),)
     parts: list[Part] = []
     for sizing in answers.sizing:
         if sizing.reason:
             parts.append(Paragraph(sentence(sizing.reason)))
+        kind = ACHIEVED[sizing.target]
         rows = []
         for size in sizing.neighbours:
-            time = size.achieved_time
-            met = time.high is not None and time.high <= target
-            partly = time.typical is not None and time.typical <= target
+            found = size.achieved
+            typical = found.typical
+            shown = "never" if typical is None else duration(typical) if kind == "time" else display.text(typical, kind)
             rows.append(
                 (
                     size.standard,
                     display.text(size.diameter, "bore"),
-                    "never" if time.typical is None else duration(time.typical),
-                    range_text(time, display, "time") or "never",
-                    "yes, over the whole range" if met else "at the typical coefficient only" if partly else "no",
+                    shown,
+                    range_text(found, display, kind) or "never",
+                    _met(answers, sizing, size),
                 )
             )
         if rows:
             columns = (
-                Column("Listed size", 1.3),
+                Column("Listed size", 1.5),
                 Column("Bore", 0.9, "right"),
-                Column("Time to the stop", 1.2, "right"),
-                Column("Range over the coefficients", 1.9, "right"),
-                Column(f"Meets {wanted_time(answers)}", 1.6),
+                Column(_ACHIEVED_WORDS[sizing.target], 1.2, "right"),
+                Column("Its range", 1.8, "right"),
+                Column(f"Meets {_wanted(answers, sizing)}", 1.6),
             )
             parts.append(Table(columns, tuple(rows)))
     return tuple(parts) or (Paragraph("No listed size was looked for."),)
+
+
+_ACHIEVED_WORDS = {"drain_time": "Time to the stop", "highest_level": "Level of rest", "flow_at": "Flow there"}
+
+
+def _met(answers: Answers, sizing: Sizing, size: Neighbour) -> str:
+    if size.meets:
+        return "yes, over the whole range"
+    target, typical = answers.system.drain_time, size.achieved.typical
+    partly = sizing.target == "drain_time" and target is not None and typical is not None and typical <= target
+    return "at the typical coefficient only" if partly else "no"
+
+
+def _wanted(answers: Answers, sizing: Sizing) -> str:
+    target = answers.case.target
+    if sizing.target == "drain_time" or target is None:
+        return wanted_time(answers)
+    if sizing.target == "highest_level" and target.highest_level is not None:
+        return unmarked(target.highest_level.text)
+    return "" if target.flow_at is None else unmarked(target.flow_at.flow.text)

@@ -3,10 +3,11 @@
 from __future__ import annotations
 
 from headfall.vessel.conical_end import ConicalEnd
+from headfall.vessel.cut_conical_end import CutConicalEnd
 from headfall.vessel.ellipsoidal_end import EllipsoidalEnd
 from headfall.vessel.end import End
 from headfall.vessel.lying_torispherical import rim_angle
-from headfall.vessel.sizes import ImpossibleShapeError, require_positive
+from headfall.vessel.sizes import ImpossibleShapeError, require_not_negative, require_positive
 from headfall.vessel.torispherical_end import TorisphericalEnd
 
 
@@ -15,13 +16,14 @@ def flat() -> End:
     return End()
 
 
-def cone(depth: float) -> ConicalEnd:
-    """Return a conical end of the depth [m].
+def cone(depth: float, cut: float = 0.0) -> End:
+    """Return a conical end of the depth [m], to its point or to where its diameter is ``cut`` [m] (a floor only).
 
-    Raises ``ImpossibleShapeError`` for a depth that is not above nil.
+    Raises ``ImpossibleShapeError`` for a depth that is not above nil or a negative cut.
     """
     require_positive("depth of the conical end", depth)
-    return ConicalEnd(depth)
+    require_not_negative("cut of the conical end", cut)
+    return ConicalEnd(depth) if cut == 0 else CutConicalEnd(depth, cut=cut)
 
 
 def ellipsoidal(diameter: float, ratio: float = 2.0) -> EllipsoidalEnd:
@@ -67,6 +69,7 @@ def torispherical(diameter: float, crown_ratio: float = 1.0, knuckle_ratio: floa
 
 __all__ = [
     "ConicalEnd",
+    "CutConicalEnd",
     "EllipsoidalEnd",
     "End",
     "TorisphericalEnd",
