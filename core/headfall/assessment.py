@@ -206,6 +206,7 @@ def _heel_check(runs: Runs, display: DisplayUnits) -> list[Finding]:
     return check_heel(
         level=heel,
         volume=float(system.profile.volume(np.array(heel))),
+        capacity=system.profile.capacity,
         form=form,
         start=system.start,
         stop=system.stop,

@@ -3,8 +3,8 @@
     python tests/bench/run.py              everything
     python tests/bench/run.py drain sheet  the named questions alone
 
-Questions: drain, answers, frame, start, sheet, figures. Offscreen; figures vary by a fifth from run to run, so trust
-the ratios.
+Questions: drain, pipe, answers, frame, start, sheet, figures. Offscreen; figures vary by a fifth from run to run, so
+trust the ratios.
 """
 
 from __future__ import annotations
@@ -27,6 +27,13 @@ def drain() -> None:
     from tests.bench.drain_time import print_drain_times
 
     print_drain_times()
+
+
+def pipe() -> None:
+    """Time of a drain time through a pipe, turbulent and viscous."""
+    from tests.bench.pipe import print_pipes
+
+    print_pipes()
 
 
 def answers() -> None:
@@ -66,6 +73,7 @@ def figures() -> None:
 
 QUESTIONS: dict[str, tuple[Callable[[], None], str]] = {
     "drain": (drain, "headfall.solve.draw_down"),
+    "pipe": (pipe, "headfall.outlet.pipe"),
     "answers": (answers, "headfall.study"),
     "frame": (frame, "headfall_app.view.page"),
     "start": (start, "headfall_app.view.page"),

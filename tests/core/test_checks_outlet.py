@@ -220,7 +220,7 @@ def test_the_pipe_table_rises_and_its_bores_are_near_their_names() -> None:
 
 def heel(**changes: Any) -> Finding:
     """The heel finding of a side opening, with some facts changed."""
-    facts: dict[str, Any] = {"level": 0.225, "volume": 0.5, "form": "side", "start": 1.7, "stop": 0.1}
+    facts: dict[str, Any] = {"level": 0.225, "volume": 0.5, "capacity": 6.0, "form": "side", "start": 1.7, "stop": 0.1}
     (finding,) = check_heel(**{**facts, **changes}, display=METRIC, place="outlets[0].elevation")
     return finding
 
@@ -239,3 +239,8 @@ def test_what_stays_below_the_lowest_outlet_is_an_attention() -> None:
 def test_a_stop_above_the_heel_makes_it_a_note_and_no_heel_raises_no_caution() -> None:
     assert heel(stop=0.3).grade is Grade.NOTE
     assert heel(volume=0.0, level=0.0).grade is Grade.NO_CAUTION
+
+
+def test_a_film_in_the_tip_of_a_cone_is_no_heel() -> None:
+    assert heel(volume=5.9e-5).grade is Grade.NO_CAUTION
+    assert heel(volume=6.1e-5).grade is Grade.ATTENTION

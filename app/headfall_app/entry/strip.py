@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from PySide6.QtCore import QRectF, QSize, Qt
-from PySide6.QtGui import QPainter, QPaintEvent
+from PySide6.QtGui import QFontMetrics, QPainter, QPaintEvent
 from PySide6.QtWidgets import QAbstractButton, QVBoxLayout, QWidget
 
 from headfall.case.model import Path
@@ -20,11 +20,15 @@ class _GroupButton(QAbstractButton):
         self._strip = strip
         self.setText(title)
         self.setAccessibleName(f"Entry: {title}")
+        self.setToolTip(title)
         self.setCheckable(True)
         self.setCursor(Qt.CursorShape.PointingHandCursor)
 
     def sizeHint(self) -> QSize:
         return QSize(WIDTH, round(text_width(self.text(), 11, 600)) + 12)
+
+    def minimumSizeHint(self) -> QSize:
+        return QSize(WIDTH, 24)
 
     def paintEvent(self, event: QPaintEvent) -> None:
         painter, theme = QPainter(self), self._strip.theme
@@ -35,7 +39,11 @@ class _GroupButton(QAbstractButton):
         painter.setPen(theme.colour("accent" if lit else "ink"))
         painter.translate(self.width(), 0)
         painter.rotate(90)
-        painter.drawText(QRectF(0, 0, self.height(), self.width()), Qt.AlignmentFlag.AlignCenter, self.text())
+        painter.drawText(QRectF(0, 0, self.height(), self.width()), Qt.AlignmentFlag.AlignCenter, self._fitted())
+
+    def _fitted(self) -> str:
+        """The name, cut short where the window is too low for it."""
+        return QFontMetrics(font(11, 600)).elidedText(self.text(), Qt.TextElideMode.ElideRight, self.height() - 8)
 
 
 class EntryStrip(QWidget):

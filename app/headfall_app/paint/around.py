@@ -7,8 +7,8 @@ from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
 from PySide6.QtGui import QPainter
 
 from headfall_app.paint import lettering
-from headfall_app.paint.layout import STAFF_NUMBERS, Frame
-from headfall_app.paint.outline_geometry import surface_span
+from headfall_app.paint.layout import JET, STAFF_NUMBERS, Frame
+from headfall_app.paint.outline_geometry import outlet_across, surface_span
 from headfall_app.paint.scene import Scene
 from headfall_app.paint.scene_outlets import DrawnOutlet
 from headfall_app.paint.section import WALL, wall_shape
@@ -90,8 +90,25 @@ def paint_receiver(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) 
     fill(painter, shape, theme.colour("liquid"))
     painter.restore()
     level_line(painter, box.left(), box.right(), row, pen(theme.colour("accent"), 2.0))
+    _paint_link(painter, frame, scene, box, theme)
     at = QPointF(box.center().x(), box.bottom() + 14.0)
     lettering.write(painter, at, receiver.text, theme.colour("ink"), 11, align=lettering.CENTRE)
+
+
+def _paint_link(painter: QPainter, frame: Frame, scene: Scene, box: QRectF, theme: Theme) -> None:
+    """Lead from an opening to the receiving vessel by a dashed line: its true way is not part of the case."""
+    outlet = scene.outlets[0]
+    if outlet.facing in ("pipe", "standpipe"):
+        return
+    drawn = pen(theme.colour("accent"), 1.5, "stop")
+    side = outlet.facing != "down"
+    x = frame.across.right + WALL if side else frame.across.x(outlet_across(scene.outline, outlet.station))
+    row = frame.y(outlet.elevation) if side else frame.bottom + JET + 4.0
+    entry = min(max(row, box.top() + 6.0), box.bottom() - 6.0)
+    bend = box.left() - 14.0
+    level_line(painter, x, bend, row, drawn)
+    plumb_line(painter, bend, min(row, entry), max(row, entry), drawn)
+    level_line(painter, bend, box.left() - WALL, entry, drawn)
 
 
 def paint_lid(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:

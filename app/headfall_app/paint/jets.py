@@ -21,10 +21,11 @@ from headfall_app.paint.section import WALL
 from headfall_app.paint.staff import numbers_left
 from headfall_app.paint.strokes import fill, pen, plumb_line, polygon, ribbon
 from headfall_app.paint.theme import Theme
-from headfall_app.paint.waterways import Run, paint_pipe, paint_weir, run_boxes
+from headfall_app.paint.waterways import Run, paint_pipe, paint_weir, pipe_run, run_boxes
 
 LEAST_WIDTH = 3.0
 _LINE = 17.0
+_DROWNED_JET = 46.0
 Label = tuple[tuple[QPointF, str, float], ...]
 
 
@@ -54,6 +55,9 @@ def paint_jets(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> l
         if outlet.flow > 0.0:
             _paint_falling(painter, place, wide, floor, max(frame.bottom + JET - floor, JET), theme)
         taken.append(QRectF(place - 0.5 * wide - 3.0, floor, wide + 6.0, frame.bottom + JET - floor))
+    for outlet in scene.outlets:
+        if outlet.facing in ("pipe", "standpipe"):
+            taken += [box.adjusted(-4.0, -2.0, 4.0, 2.0) for box in run_boxes(pipe_run(frame, scene, outlet))]
     for index, place in places.items():
         wide = max(scene.outlets[index].width * frame.pixels_per_metre, LEAST_WIDTH)
         boxes.append(
@@ -75,9 +79,7 @@ def _paint_waterways(
     for index, outlet in enumerate(scene.outlets):
         paint_tailwater(painter, frame, scene, outlet, theme)
         if outlet.facing in ("pipe", "standpipe"):
-            run = paint_pipe(painter, frame, scene, outlet, theme)
-            taken += [box.adjusted(-4.0, -2.0, 4.0, 2.0) for box in run_boxes(run)]
-            ways = _along(frame, outlet, run)
+            ways = _along(frame, outlet, paint_pipe(painter, frame, scene, outlet, theme))
         elif outlet.facing == "weir":
             foot = paint_weir(painter, frame, scene, outlet, theme)
             ways = _over(frame, scene, index, foot)
@@ -151,7 +153,11 @@ def _paint_sideways(painter: QPainter, frame: Frame, scene: Scene, outlet: Drawn
         reach = 2.0 * JET_VELOCITY_COEFFICIENT * np.sqrt(outlet.head * fall)
         thick = max(0.8 * tall, LEAST_WIDTH)
         rows = row + fall * frame.pixels_per_metre
+        painter.save()
+        if outlet.tail is not None:
+            painter.setClipRect(QRectF(wall - 2.0, 0.0, _DROWNED_JET, frame.bottom))
         fill(painter, ribbon(wall + reach * frame.pixels_per_metre, rows, thick), theme.colour("accent"))
+        painter.restore()
     return QPointF(wall, row)
 
 

@@ -19,6 +19,7 @@ STAFF = 11.0
 LEAD, FLAG, TAIL = 16.0, 104.0, 12.0
 STAFF_NUMBERS = 50.0
 RIGHT_EDGE = 12.0
+RECEIVER_ROOM, TAILWATER_ROOM, WEIR_ROOM = 140.0, 74.0, 40.0
 JET = 50.0
 FLOW_SHARE = 0.39
 # A vessel that would fill less of the band than this, and less than so many pixels, is drawn cut.
@@ -158,6 +159,16 @@ def _column(width: float) -> float:
     return max(min(wide, rest - LEAST_PLOT), LEAST_COLUMN)
 
 
+def _aside(scene: Scene) -> float:
+    """Return the room [px] kept to the right of the vessel for what its outlets discharge into."""
+    if scene.receiver is not None:
+        return RECEIVER_ROOM
+    beside = [outlet for outlet in scene.outlets if outlet.facing not in ("pipe", "standpipe")]
+    if any(outlet.tail is not None for outlet in beside):
+        return TAILWATER_ROOM
+    return WEIR_ROOM if any(outlet.facing == "weir" for outlet in beside) else 0.0
+
+
 def arrange(width: float, height: float, scene: Scene, show: str = "auto") -> Frame:
     """Return the geometry of the stage; ``show`` is ``auto`` or ``whole`` (never cut)."""
     room = room_about(scene)
@@ -165,14 +176,15 @@ def arrange(width: float, height: float, scene: Scene, show: str = "auto") -> Fr
     band, with_flow = _band_limit(height, room, scene.height / (scene.height + depth))
     reach = scene.farthest_reach
     column = _column(width)
-    limit = max(column - room.left - STAFF_NUMBERS, 80.0)
+    aside = _aside(scene)
+    limit = max(column - room.left - STAFF_NUMBERS - aside, 80.0)
     stretches, can_be_cut = _stretches(scene, limit, band, show)
     shown = sum(end - start for start, end in stretches) + reach
     breaks = (len(stretches) - 1) * BREAK_WIDTH
     scale = min(band / scene.height, (limit - breaks) / shown)
     drawn = shown * scale + breaks
-    taken = max(drawn, LEAST_COLUMN - room.left - STAFF_NUMBERS)
-    left = room.left + 0.5 * (taken - drawn)
+    taken = max(drawn + aside, LEAST_COLUMN - room.left - STAFF_NUMBERS)
+    left = room.left + 0.5 * (taken - drawn - aside)
     bottom = float(round(room.top + scene.height * scale))
     staff_left = float(round(room.left + taken + STAFF_NUMBERS))
     plot_left = staff_left + STAFF + LEAD + FLAG + TAIL

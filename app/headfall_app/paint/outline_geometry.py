@@ -58,10 +58,20 @@ def top_span(outline: Outline) -> tuple[float, float]:
     return surface_span(outline, float(outline.wall[:, 1].max())) or (left, right)
 
 
+def _lowest_across(outline: Outline) -> float:
+    """Return the middle, or beside the lowest corner where an upright vessel's floor falls to one side."""
+    left, right = extent(outline)
+    middle = 0.5 * (left + right)
+    if outline.axis != "vertical" or floor_under(outline, middle) < 1e-9:
+        return middle
+    corner = float(outline.wall[np.argmin(outline.wall[:, 1]), 0])
+    return corner + 0.12 * (right - left) * float(np.sign(middle - corner))
+
+
 def outlet_across(outline: Outline, station: float | None) -> float:
-    """Return where a downward outlet sits across [m]: at its station from the low end, else in the middle."""
+    """Return where a downward outlet sits across [m]: at its station from the low end, else at the lowest place."""
     left, right = extent(outline)
     if station is None:
-        return 0.5 * (left + right)
+        return _lowest_across(outline)
     origin = outline.tangents[0] if outline.tangents else left
     return min(max(origin + station, left), right)

@@ -135,7 +135,7 @@ def scene_of(answers: Answers, display: DisplayUnits, *, now: float | None = Non
         settles_at=None if answers.equilibrium.overflows else settles.typical,
         loose=loose_parts(answers, display),
         receiver=receiver,
-        bodies=drawn_bodies(answers),
+        bodies=drawn_bodies(answers, display),
         lid=drawn_lid(answers, display, time),
         lowest=lowest_drawn(outlets, receiver),
         section_title="Section, to scale" if to_scale else "Section, heights to scale",
@@ -219,4 +219,4 @@ def _shaded(answers: Answers) -> str:
     if len(ranges) != 1:
         return "shaded: the coefficients’ ranges"
     ((low, high),) = ranges
-    return "" if low == high else f"shaded: coefficient {low:g} to {high:g}"
+    return "" if low == high else f"shaded: coefficient {low:.3g} to {high:.3g}"

@@ -55,10 +55,11 @@ def drawn_receiver(answers: Answers, display: DisplayUnits, level: float) -> Dra
     )
 
 
-def drawn_bodies(answers: Answers) -> tuple[DrawnBody, ...]:
-    """Return what takes space inside, as typed."""
+def drawn_bodies(answers: Answers, display: DisplayUnits) -> tuple[DrawnBody, ...]:
+    """Return what takes space inside."""
     return tuple(
-        DrawnBody(body.from_.value, body.to.value, body.volume.text) for body in answers.case.vessel.displacement or ()
+        DrawnBody(body.from_.value, body.to.value, display.text(body.volume.value, "volume"))
+        for body in answers.case.vessel.displacement or ()
     )
 
 

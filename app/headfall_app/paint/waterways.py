@@ -8,7 +8,7 @@ import numpy as np
 from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QPainter, QPolygonF
 
-from headfall_app.paint.layout import Frame
+from headfall_app.paint.layout import WEIR_ROOM, Frame
 from headfall_app.paint.outline_geometry import floor_under, outlet_across, surface_span
 from headfall_app.paint.scene import Scene
 from headfall_app.paint.scene_outlets import DrawnOutlet
@@ -44,7 +44,7 @@ def pipe_run(frame: Frame, scene: Scene, outlet: DrawnOutlet) -> Run:
     end_level = outlet.elevation if outlet.discharge is None else outlet.discharge
     if outlet.facing == "standpipe":
         left, right = surface_span(scene.outline, outlet.elevation) or (0.0, 1.0)
-        x = frame.across.x(left + 0.72 * (right - left))
+        x = frame.across.x(left + 0.86 * (right - left))
         foot = frame.bottom + _STUB if outlet.discharge is None else frame.y(end_level)
         return Run(((x, frame.y(outlet.elevation)), (x, max(foot, frame.bottom + WALL))), bore, end_bore)
     across = outlet_across(scene.outline, outlet.station)
@@ -150,10 +150,10 @@ def paint_weir(painter: QPainter, frame: Frame, scene: Scene, outlet: DrawnOutle
     painter.fillRect(QRectF(foot.x() - 0.5, top, 2.0 * WALL + 2.0, foot.y() - top), theme.colour("surface"))
     plumb_line(painter, foot.x() + 0.5 * WALL, foot.y(), foot.y() + 10.0, pen(theme.colour("wall"), WALL))
     if outlet.flow > 0.0 and outlet.head > 0.0:
-        thick = max(outlet.head * frame.pixels_per_metre * 0.7, 2.5)
+        thick = min(max(outlet.head * frame.pixels_per_metre * 0.7, 2.5), WEIR_ROOM)
         fall = min(0.5 * (frame.bottom - foot.y()) + 24.0, 90.0)
         along = np.linspace(0.0, 1.0, 20)
-        x = foot.x() - 6.0 + (10.0 + 0.35 * fall) * along
+        x = foot.x() - 6.0 + min(10.0 + 0.35 * fall, WEIR_ROOM - 0.5 * thick) * along
         y = foot.y() - 0.5 * thick + fall * along**2
         fill(painter, ribbon(x, y, thick), theme.colour("accent"))
     return foot

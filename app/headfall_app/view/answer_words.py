@@ -94,8 +94,7 @@ def _rest(answers: Answers, display: DisplayUnits) -> Answer:
     rest, system = answers.equilibrium, answers.system
     if rest.surges_at is not None:
         full = display.text(rest.surging_flow or 0.0, "flow")
-        at = display.text(rest.surges_at, "level")
-        return Answer("Settles at", (("no steady level", True),), f"surges about {at}: {full} goes out when full")
+        return Answer("Settles at", (("no steady level", True),), f"surges; full it passes {full}")
     if rest.overflows or rest.level.typical is None:
         needed = rest.needed_level
         words = "above overflow" if needed is not None and needed <= system.profile.height else "above the top"
@@ -112,7 +111,7 @@ def _held_by(answers: Answers, display: DisplayUnits) -> str:
     if isinstance(answers.system.headspace, ClosedHeadspace) and answers.headspace is not None:
         return f"held by {display.text(abs(answers.headspace.lowest), 'pressure')} of vacuum"
     if answers.receiver_level is not None:
-        return "nothing flows in; the receiving vessel fills"
+        return "level with the receiver"
     return "nothing flows in"
 
 

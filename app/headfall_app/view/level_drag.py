@@ -1,11 +1,15 @@
-"""Moving a level of the case from the drawing, in the unit it was typed in."""
+"""Moving a level of the case from the drawing, in the form it was typed in: height, volume, percent or site height."""
 
 from __future__ import annotations
 
 import math
 
+import numpy as np
+
 from headfall.case.model import Case, Path
+from headfall.case.typed_quantity import read_quantity
 from headfall.quantities import Quantity, parse, written
+from headfall.system.levels import LevelFault, level_of
 from headfall_app.document import Document
 from headfall_app.paint.ticks import nice_step
 
@@ -19,9 +23,11 @@ def typed_level(case: Case, key: str) -> Quantity | None:
 
 
 def unit_of(case: Case, key: str) -> str:
-    """Return the unit a level was typed in; of a level left out, that of the start."""
+    """Return the unit of height a level was typed in: of a level left out that of the start, of a volume the metre."""
     typed = typed_level(case, key) or case.levels.start
-    return typed.unit or "m"
+    if typed.dimension not in ("length", "site"):
+        return "m"
+    return (typed.unit or "m").removesuffix(" site")
 
 
 def scale_of(unit: str) -> float:
@@ -67,27 +73,51 @@ class LevelDrag:
         self._document.end_gesture()
 
     def _written(self, level: float) -> Quantity:
+        typed = self._former or self._document.case.levels.start
+        answers = self._document.answers
+        if answers is None or typed.dimension == "length":
+            return self._as_height(level)
+        system = answers.system
+        if typed.dimension == "site":
+            return read_quantity(f"{self._as_height(level + (system.site_datum or 0.0)).text} site", "level")
+        volume = float(system.profile.volume(np.array(level)))
+        if typed.dimension == "percent":
+            return read_quantity(f"{100.0 * volume / system.profile.capacity:.4g} %", "level")
+        return read_quantity(written(volume, typed.unit, "volume", 5).text, "level")
+
+    def _as_height(self, level: float) -> Quantity:
         # A level is told to the millimetre, however many figures that takes.
-        whole = max(level / scale_of(self._unit), 1e-12)
-        digits = max(
-            3, math.floor(math.log10(whole)) + 2 - math.floor(math.log10(small_step(self._unit) / scale_of(self._unit)))
-        )
+        whole = max(abs(level) / scale_of(self._unit), 1e-12)
+        step = small_step(self._unit) / scale_of(self._unit)
+        digits = max(3, math.floor(math.log10(whole)) + 2 - math.floor(math.log10(step)))
         return written(level, self._unit, "length", digits)
 
     def _present(self) -> float:
-        typed = typed_level(self._document.case, self.key)
-        return typed.value if typed is not None else self._top()
+        present = self._height(self.key)
+        return self._top() if present is None else present
+
+    def _height(self, key: str) -> float | None:
+        """Return a level [m] above the lowest inside point, None where it was left out or cannot be told."""
+        typed = typed_level(self._document.case, key)
+        if typed is None or typed.dimension == "length":
+            return None if typed is None else typed.value
+        answers = self._document.answers
+        if answers is None:
+            return None
+        try:
+            return level_of(typed, answers.system.profile, answers.system.site_datum)
+        except LevelFault:
+            return None
 
     def _top(self) -> float:
         answers = self._document.answers
         return answers.system.profile.height if answers is not None else math.inf
 
     def _highest(self) -> float:
-        overflow = self._document.case.levels.overflow
-        if self.key == "overflow" or overflow is None:
-            return self._top()
-        return min(overflow.value, self._top())
+        overflow = None if self.key == "overflow" else self._height("overflow")
+        return self._top() if overflow is None else min(overflow, self._top())
 
     def _lowest(self) -> float:
-        levels = self._document.case.levels
-        return max(levels.start.value, levels.stop.value) if self.key == "overflow" else 0.0
+        if self.key != "overflow":
+            return 0.0
+        return max(self._height("start") or 0.0, self._height("stop") or 0.0)
