@@ -39,7 +39,8 @@ def _range(figure: Figure, kind: str, display: DisplayUnits) -> str:
     if figure.low is None or figure.high is None:
         reached = [end for end in (figure.low, figure.high) if end is not None]
         return f"from {display.text(reached[0], kind)}" if reached and figure.typical is not None else ""
-    return f"{display.text(figure.low, kind)} to {display.text(figure.high, kind)}"
+    low, high = display.text(figure.low, kind), display.text(figure.high, kind)
+    return "the same over the whole range" if low == high else f"{low} to {high}"
 
 
 def _vessel(answers: Answers, display: DisplayUnits) -> Iterator[str]:

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
+
 import numpy as np
 
 from headfall.answers import (
@@ -207,9 +209,12 @@ def _resting_figure(levels: list[float | None]) -> Figure:
 
 
 def _largest_inflow(runs: Runs) -> Figure:
-    """What the drains pass with the level standing at overflow."""
-    system = runs.system
-    each = runs.still.each(np.full(3, system.overflow), runs.rows())
+    """What the drains pass with the level standing at overflow; the gas of a closed headspace is not counted on."""
+    system, still = runs.system, runs.still
+    if isinstance(system.headspace, ClosedHeadspace):
+        # Pressed into what room is left under the lid it would drive out far more than any tank bears.
+        still = replace(still, headspace=OpenHeadspace())
+    each = still.each(np.full(3, system.overflow), runs.rows())
     drains = [flow for outlet, flow in zip(system.outlets, each, strict=True) if outlet.role == "drain"]
     total = np.sum(drains, axis=0) if drains else np.zeros(3)
     low, typical, high = (max(float(value), 0.0) for value in total)

@@ -26,6 +26,7 @@ from headfall_app.paint.scene_loose import LoosePart, loose_parts
 from headfall_app.paint.scene_outlets import DrawnOutlet, drawn_outlets
 
 _WIDEST_TABLE = 2.2
+_WIDEST_TRUE = 6.0
 
 
 @dataclass(frozen=True, slots=True)
@@ -106,7 +107,8 @@ def scene_of(answers: Answers, display: DisplayUnits, *, now: float | None = Non
     """
     time = 0.0 if now is None else min(max(now, 0.0), float(answers.curve.time[-1]))
     typical, low, high = (level_at(run, time) for run in (answers.curve, answers.curve_low, answers.curve_high))
-    outline, to_scale = _drawn_outline(answers)
+    share, true = _share_across(answers), answers.system.profile.outline
+    outline = _squeezed(true, share)
     outlets = drawn_outlets(answers, display, typical, lit)
     receiver = drawn_receiver(answers, display, typical)
     settles = answers.equilibrium.level
@@ -117,7 +119,7 @@ def scene_of(answers: Answers, display: DisplayUnits, *, now: float | None = Non
         height=answers.system.profile.height,
         marks=level_marks(answers, display, typical if now is not None else None),
         outlets=outlets,
-        sizes=size_lines(answers.case, outline, display, lit),
+        sizes=_squeezed_sizes(size_lines(answers.case, true, display, lit), share),
         inflow=answers.system.inflow,
         inflow_text=f"{display.text(answers.system.inflow, 'flow')} in" if answers.system.inflow > 0.0 else "",
         curve=answers.curve,
@@ -138,23 +140,37 @@ def scene_of(answers: Answers, display: DisplayUnits, *, now: float | None = Non
         bodies=drawn_bodies(answers, display),
         lid=drawn_lid(answers, display, time),
         lowest=lowest_drawn(outlets, receiver),
-        section_title="Section, to scale" if to_scale else "Section, heights to scale",
+        section_title="Section, to scale" if share == 1.0 else "Section, heights to scale",
         shaded_text=_shaded(answers),
         display=display,
     )
 
 
-def _drawn_outline(answers: Answers) -> tuple[Outline, bool]:
-    """The outline to draw, and whether it is true across: a table says nothing of widths, and is drawn no wider than
+def _share_across(answers: Answers) -> float:
+    """Return how much the section is squeezed across, 1 where it is to scale.
 
-    a few times its height.
+    A table says nothing of widths, and a wide shallow vessel would leave its levels no height; a vessel that may be
+    cut is cut instead.
     """
     outline = answers.system.profile.outline
-    if not isinstance(answers.case.vessel, TableVessel):
-        return outline, True
-    wide = float(outline.wall[:, 0].max() - outline.wall[:, 0].min())
-    share = min(1.0, _WIDEST_TABLE * answers.system.profile.height / wide)
-    return replace(outline, wall=outline.wall * np.array([share, 1.0])), share == 1.0
+    across = float(outline.wall[:, 0].max() - outline.wall[:, 0].min()) / answers.system.profile.height
+    if isinstance(answers.case.vessel, TableVessel):
+        return min(1.0, _WIDEST_TABLE / across)
+    if across <= _WIDEST_TRUE or outline.axis != "vertical" or _uniform(answers.case, outline) is not None:
+        return 1.0
+    return _WIDEST_TABLE / across
+
+
+def _squeezed(outline: Outline, share: float) -> Outline:
+    tangents = tuple(share * place for place in outline.tangents)
+    return outline if share == 1.0 else replace(outline, wall=outline.wall * np.array([share, 1.0]), tangents=tangents)
+
+
+def _squeezed_sizes(lines: tuple[SizeLine, ...], share: float) -> tuple[SizeLine, ...]:
+    """Move the dimension lines with the section; what they say stays true."""
+    return tuple(
+        replace(one, start=(share * one.start[0], one.start[1]), end=(share * one.end[0], one.end[1])) for one in lines
+    )
 
 
 def _slopes(case: Case) -> bool:

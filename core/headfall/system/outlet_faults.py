@@ -82,10 +82,10 @@ def _run_faults(place: model.Path, run: model.Pipe | model.PipeSection) -> list[
     faults = []
     for index, typed in enumerate(run.fittings or ()):
         if typed.loss is None and fitting(typed.name or "") is None:
-            known = ", ".join(known.name for known in fittings())
+            known = "; ".join(known.name for known in fittings())
             found = f"{typed.name or 'a fitting without a name'} is not a fitting known here"
             where = (*place, "fittings", index, "name")
-            faults.append(Fault(where, found[0].upper() + found[1:], f"Give its loss, or choose from: {known}"))
+            faults.append(Fault(where, found[0].upper() + found[1:], f"Give its loss, or one of these names: {known}"))
     needed = run.material and run.roughness is None and run.friction_factor is None
     if needed and material_roughness(run.material or "") is None:
         found = f"{run.material} is not a material known here"
