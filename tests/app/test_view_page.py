@@ -6,6 +6,7 @@ import json
 from collections.abc import Callable
 from typing import Any
 
+import numpy as np
 import pytest
 from PySide6.QtWidgets import QLabel, QWidget
 
@@ -211,7 +212,7 @@ def test_the_parts_of_the_page_stand_under_one_another(open_page: OpenPage, drum
 
 def test_a_shallow_vessel_lets_the_notes_move_up(open_page: OpenPage) -> None:
     shallow = case_with(
-        vessel={"shape": "cone", "top_diameter": "14 m", "bottom_diameter": "10 m", "height": "1 m"},
+        vessel={"shape": "cone", "top_diameter": "14 m", "bottom_diameter": "10 m", "height": "2.5 m"},
         levels={"start": "0.9 m", "stop": "0.5 m"},
     )
     page = open_page(shallow)
@@ -227,3 +228,15 @@ def test_another_theme_reaches_every_part(open_page: OpenPage, drum: Case) -> No
     assert picture.pixelColor(3, 3) == ground
     for part in (page.stage, page.answers_row):
         assert picture.pixelColor(part.geometry().bottomRight()) == ground
+
+
+def test_a_wide_shallow_vessel_is_squeezed_across_and_says_so(open_page: OpenPage) -> None:
+    shallow = case_with(
+        vessel={"shape": "cone", "top_diameter": "14 m", "bottom_diameter": "10 m", "height": "1 m"},
+        levels={"start": "0.9 m", "stop": "0.5 m"},
+    )
+    scene = open_page(shallow).stage.scene
+    assert scene is not None
+    assert scene.section_title == "Section, heights to scale"
+    assert np.ptp(scene.outline.wall[:, 0]) < 3.0
+    assert "10 m" in {line.text for line in scene.sizes}
