@@ -16,6 +16,7 @@ from headfall.case.model import Case, Path
 from headfall.files import read_case, write_case
 from headfall.quantities import DisplayUnits, display_units
 from headfall.system import build_system
+from headfall_app.entry_faults import entry_faults, without_wrong
 from headfall_app.undo import Draft, DraftStep, WrongEntry
 from headfall_app.words import name_of
 
@@ -121,7 +122,9 @@ class Document(QObject):
         if self._draft.wrong and self._answers is not None:
             self._check_only(case)
             return
-        self._tried, self._checked, self._case_faults = case, None, ()
+        self._tried, self._checked, self._case_faults = case, None, entry_faults(case)
+        if self._case_faults:
+            return
         try:
             self._answers = self._solver(case)
         except CaseError as refusal:
@@ -135,11 +138,14 @@ class Document(QObject):
         """Find the faults between entries while one cannot be read: the answers wait, a mended fault does not stay."""
         if self._checked is case:
             return
-        self._checked, self._tried, self._case_faults = case, None, ()
+        wrong = tuple(self.wrong)
+        self._checked, self._tried, self._case_faults = case, None, entry_faults(case, wrong)
+        if self._case_faults:
+            return
         try:
             build_system(case)
         except CaseError as refusal:
-            self._case_faults = tuple(refusal.faults)
+            self._case_faults = without_wrong(refusal.faults, wrong)
 
     # Changing it ------------------------------------------------------------------------------------------------------
 
@@ -152,12 +158,19 @@ class Document(QObject):
         entry = WrongEntry(path, typed, sentence)
         self._step(Draft(self.case, (*self._draft.without(path), entry)), text, gesture)
 
-    def change(self, case: Case, text: str, moved: Callable[[Path], Path | None] = lambda path: path) -> None:
+    def change(
+        self,
+        case: Case,
+        text: str,
+        moved: Callable[[Path], Path | None] = lambda path: path,
+        found_wrong: tuple[WrongEntry, ...] = (),
+    ) -> None:
         """Put another case in place as one step of undo.
 
-        ``moved`` says where a wrong entry stands afterwards, None where its entry is gone.
+        ``moved`` says where a wrong entry stands afterwards, None where its entry is gone; ``found_wrong`` are the
+        entries of the other case that could not be read.
         """
-        wrong = []
+        wrong = list(found_wrong)
         for entry in self._draft.wrong:
             path = moved(entry.path)
             if path is not None:

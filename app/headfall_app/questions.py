@@ -8,6 +8,7 @@ from PySide6.QtWidgets import QFileDialog, QMessageBox, QWidget
 
 CASES = "Headfall cases (*.headfall)"
 SHEETS = "PDF (*.pdf)"
+TABLES = "CSV (*.csv)"
 SAVE, LEAVE, STAY = "save", "leave", "stay"
 
 
@@ -28,6 +29,11 @@ class Questions:
         """Ask where to write the sheet; None when nobody chose a place."""
         name, _ = QFileDialog.getSaveFileName(parent, "Export the sheet as PDF", suggested, SHEETS)
         return _with_suffix(name, ".pdf")
+
+    def table_to_write(self, parent: QWidget, suggested: str) -> Path | None:
+        """Ask where to write a table; None when nobody chose a place."""
+        name, _ = QFileDialog.getSaveFileName(parent, "Export the table as CSV", suggested, TABLES)
+        return _with_suffix(name, ".csv")
 
     def unsaved(self, parent: QWidget, title: str) -> str:
         """Ask what becomes of unsaved work: ``save``, ``leave`` or ``stay``."""

@@ -67,6 +67,19 @@ QComboBox QAbstractItemView {
 }
 QComboBox QAbstractItemView::item { min-height: 24px; padding: 0 7px; }
 
+QTableView {
+    color: $ink; background: $field; border: 1px solid $edge; border-radius: 2px; gridline-color: $hair;
+    selection-background-color: $accent_soft; selection-color: $ink; outline: 0;
+}
+QTableView:focus { border-color: $accent; selection-background-color: $accent; selection-color: $on_accent; }
+QTableView QLineEdit { border: 2px solid $accent; border-radius: 0; padding: 0 1px; }
+QHeaderView { background: $panel; border: 0; }
+QHeaderView::section {
+    background: $panel; color: $muted; border: 0; border-bottom: 1px solid $hair; border-right: 1px solid $hair;
+    padding: 1px 4px;
+}
+QTableCornerButton::section { background: $panel; border: 0; border-bottom: 1px solid $hair; }
+
 QPushButton#link {
     color: $muted; background: transparent; border: 2px solid transparent; border-radius: 2px; padding: 0 1px;
 }
@@ -76,6 +89,7 @@ QPushButton {
     color: $ink; background: $field; border: 1px solid $edge; border-radius: 2px; padding: 4px 14px; min-height: 18px;
 }
 QPushButton:hover { border-color: $ink; }
+QPushButton:disabled { color: $stale; border-color: $hair; background: $panel; }
 QPushButton:focus, QPushButton:default:focus { border: 2px solid $accent; padding: 3px 13px; }
 
 QMenuBar { background: transparent; color: $ink; border: 0; }

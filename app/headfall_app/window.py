@@ -7,36 +7,33 @@ from typing import TYPE_CHECKING
 
 from PySide6.QtCore import QSize, Qt
 from PySide6.QtGui import QCloseEvent, QDragEnterEvent, QDropEvent, QGuiApplication, QResizeEvent, QShowEvent
-from PySide6.QtWidgets import QApplication, QHBoxLayout, QVBoxLayout, QWidget
+from PySide6.QtWidgets import QHBoxLayout, QVBoxLayout
 
-from headfall.case.faults import CaseError
 from headfall.case.model import Case
 from headfall.case.model import Path as EntryPath
-from headfall.files import FileError, fingerprint, read_case
-from headfall_app.document import Document, SaveRefused
+from headfall_app.case_window import CASE_SUFFIX, CaseWindow
+from headfall_app.document import Document
 from headfall_app.entry.changes import add_outlet
-from headfall_app.entry.line import EntryLine
 from headfall_app.entry.panel import WIDE_WINDOW, EntryPanel
 from headfall_app.entry.strip import FOLDED_BELOW, EntryStrip
 from headfall_app.head_row import HeadRow
 from headfall_app.menus import Menus
 from headfall_app.message import MessagePanel, Notice
 from headfall_app.paint.theme import Theme, theme
-from headfall_app.questions import LEAVE, SAVE, Questions
-from headfall_app.resources import resource_path
-from headfall_app.settings import Settings, is_own_folder
+from headfall_app.questions import Questions
+from headfall_app.settings import Settings
 from headfall_app.style import dress
 from headfall_app.view.page import TankPage
 from headfall_app.words import group_title
 
 if TYPE_CHECKING:
     from headfall_app.help_window import HelpWindow
+    from headfall_app.tables_window import TablesWindow
 
 SMALLEST, FIRST = QSize(1024, 640), QSize(1400, 900)
-CASE_SUFFIX = ".headfall"
 
 
-class Window(QWidget):
+class Window(CaseWindow):
     """Head row, message, entry at the left, page at the right."""
 
     def __init__(
@@ -52,6 +49,7 @@ class Window(QWidget):
         self.message, self.notice = MessagePanel(self), Notice(self)
         self.head = HeadRow(self.document, Menus(self, self), self)
         self.help: HelpWindow | None = None
+        self.tables: TablesWindow | None = None
         self._lay_out()
         self.setAcceptDrops(True)
         self.setMinimumSize(SMALLEST)
@@ -87,120 +85,6 @@ class Window(QWidget):
         name = file.name if file else self.document.case.title or "Untitled case"
         self.setWindowTitle(f"{name}[*] – Headfall")
         self.setWindowModified(self.document.has_unsaved_work)
-
-    # Files ------------------------------------------------------------------------------------------------------------
-
-    def new_case(self) -> None:
-        """Begin a plain new case."""
-        if self._may_leave():
-            self._begin_from(resource_path("app/new_case.headfall"))
-
-    def open_example(self, file: Path) -> None:
-        """Begin a case like the example; it has no file of its own yet."""
-        if self._may_leave():
-            self._begin_from(file)
-
-    def _begin_from(self, file: Path) -> None:
-        try:
-            self.document.begin(read_case(file))
-        except CaseError as refusal:
-            self._say_not_opened(file, refusal)
-
-    def open_case(self) -> None:
-        """Ask for a case file and open it."""
-        file = self._questions.file_to_open(self, self.settings.folder)
-        if file:
-            self.open_file(file)
-
-    def open_file(self, file: Path) -> bool:
-        """Open a case file; a file with faults is told about and the case in hand stays."""
-        if not self._may_leave():
-            return False
-        try:
-            self.document.open(file)
-        except CaseError as refusal:
-            self._say_not_opened(file, refusal)
-            return False
-        self.settings.remember(file)
-        return True
-
-    def _say_not_opened(self, file: Path, refusal: CaseError) -> None:
-        lines = [fault.line for fault in refusal.faults]
-        self.message.say(f"{file.name} was not opened. The case in hand is unchanged.", lines)
-
-    def save(self) -> bool:
-        """Save to the case's file, asking for one where it has none or is an example; returns whether it was saved."""
-        file = self.document.file
-        return self.save_as() if file is None or is_own_folder(file.parent) else self._save_to(file)
-
-    def save_as(self) -> bool:
-        """Ask where to save, and save; returns whether it was saved."""
-        self._take_in()
-        if self.document.faults:
-            self.message.say(self.document.refusal("Not saved"))
-            return False
-        file = self._questions.file_to_save(self, str(self._suggested(CASE_SUFFIX)))
-        return bool(file) and self._save_to(file)
-
-    def _save_to(self, file: Path | None) -> bool:
-        self._take_in()
-        if file is None:
-            return False
-        try:
-            self.document.save(file)
-        except SaveRefused as refusal:
-            self.message.say(str(refusal))
-        except FileError as trouble:
-            self.message.say(trouble.sentence)
-        else:
-            self.settings.remember(file)
-            self.message.hide()
-            return True
-        return False
-
-    def export_sheet(self) -> None:
-        """Ask where to write the sizing sheet, and write it."""
-        self._take_in()
-        answers = self.document.answers
-        if self.document.faults or answers is None:
-            self.message.say(self.document.refusal("No sheet was written"))
-            return
-        file = self._questions.sheet_to_write(self, str(self._suggested(".pdf")))
-        if file is None:
-            return
-        # Imported where used: the printer is no part of the first paint.
-        from headfall_app.print.sheet_pdf import write_sheet_pdf
-
-        try:
-            write_sheet_pdf(answers, file, self.paper, fingerprint=fingerprint(answers.case))
-        except FileError as trouble:
-            self.message.say(trouble.sentence)
-        else:
-            self.message.hide()
-            self.notice.tell(f"The sheet was written to {file}.")
-
-    def _suggested(self, suffix: str) -> Path:
-        file = self.document.file
-        if file and not is_own_folder(file.parent):
-            return file.with_suffix(suffix)
-        name = self.document.case.title or (file.stem if file else "untitled")
-        plain = "".join(letter if letter.isalnum() else "_" for letter in name.lower()).strip("_")
-        return Path(self.settings.folder) / ((plain or "untitled") + suffix)
-
-    def _take_in(self) -> None:
-        """Take in what stands in the field that has the cursor: a key press reaches a menu before the field."""
-        line = QApplication.focusWidget()
-        if isinstance(line, EntryLine) and self.isAncestorOf(line):
-            line.finish()
-
-    def _may_leave(self) -> bool:
-        self._take_in()
-        if not self.document.has_unsaved_work:
-            return True
-        file = self.document.file
-        name = self.document.case.title or (file.stem if file else "This case")
-        answer = self._questions.unsaved(self, name)
-        return answer == LEAVE or (answer == SAVE and self.save())
 
     # Showing ----------------------------------------------------------------------------------------------------------
 
@@ -259,9 +143,23 @@ class Window(QWidget):
 
     # Entries and help -------------------------------------------------------------------------------------------------
 
-    def add_outlet(self) -> None:
-        """Add an outlet after the last one and put the cursor into it."""
-        add_outlet(self.document, len(self.document.case.outlets) - 1)
+    def show_tables(self) -> None:
+        """Show the tables beside the window."""
+        self._take_in()
+        if self.tables is None:
+            from headfall_app.tables_window import TablesWindow
+
+            self.tables = TablesWindow(self.document, self._questions, self.settings.folder, self)
+            self.tables.entry_requested.connect(self._go_from_tables)
+        self.tables.show_table()
+
+    def _go_from_tables(self, path: EntryPath) -> None:
+        self.activateWindow()
+        self.go_to_entry(path)
+
+    def add_outlet(self, kind: str = "") -> None:
+        """Add an outlet after the last one and put the cursor into it; a kind asks for an opening, a pipe or a weir."""
+        add_outlet(self.document, len(self.document.case.outlets) - 1, kind=kind)
         self.entry.go_to(("outlets", len(self.document.case.outlets) - 1, "name"))
 
     def go_to_entry(self, path: EntryPath) -> None:
@@ -310,8 +208,9 @@ class Window(QWidget):
             return
         self.settings.geometry = self.saveGeometry()
         self.settings.sync()
-        if self.help is not None:
-            self.help.close()
+        for beside in (self.help, self.tables):
+            if beside is not None:
+                beside.close()
         event.accept()
 
 

@@ -46,16 +46,32 @@ def group_title(path: Path) -> str:
 
 
 def name_of(path: Path) -> str:
-    """Return an entry's name in a sentence: ``Outlet 1, diameter``; empty for the case as a whole."""
+    """Return an entry's name in a sentence: ``Outlet 1, fitting 2, loss K``; empty for the case as a whole."""
     if not path:
         return ""
     title = group_title(path)
     if len(path) == 1 or (path[0] == "outlets" and len(path) == 2):
         return label_of(path) if path[0] not in words()["groups"] else title
-    names = [title, label_of(path)]
-    if path[:2] == ("vessel", "heads") and len(path) == 4:
-        names.insert(1, label_of(path[:3]))
-    return ", ".join([names[0], *map(lowered, names[1:])])
+    named = words()["fields"]
+    within = [_part_name(path, depth) for depth in range(2, len(path)) if isinstance(path[depth], int)]
+    whole = label_of(path) if isinstance(path[-1], str) or key_of(path) in named else ""
+    if isinstance(path[-1], int) and isinstance(path[-2], int):
+        whole = f"column {path[-1] + 1}"
+    return ", ".join([title, *map(lowered, filter(None, (_receiver(path), *within, whole)))])
+
+
+def _receiver(path: Path) -> str:
+    return "receiving vessel" if path[2:4] == ("tailwater", "vessel") and len(path) > 4 else ""
+
+
+def _part_name(path: Path, depth: int) -> str:
+    """Return what one member of a list is called: ``fitting 2``; of the ends of a drum the end's own label."""
+    name, index = str(path[depth - 1]), int(path[depth])
+    if name == "heads":
+        return label_of(path[: depth + 1]) if depth + 1 < len(path) else ""
+    called = words()["parts"].get(name, "")
+    # The pipe itself is the first of its sections.
+    return f"{called} {index + (2 if name == 'sections' else 1)}" if called else ""
 
 
 def choices_of(key: str) -> tuple[tuple[str, str], ...]:

@@ -37,5 +37,7 @@ def _inside(vessel: Any) -> str:
     """What was typed of wall, lining and internals, in a word."""
     if getattr(vessel, "displacement", None):
         return "space taken"
+    if not hasattr(vessel, "sizes"):
+        return "empty"
     typed = any(getattr(vessel, name, None) is not None for name in ("sizes", "wall", "lining"))
     return "as typed" if typed else "inside sizes, empty"

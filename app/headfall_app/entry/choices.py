@@ -18,6 +18,7 @@ from headfall.case.model import (
 from headfall.outlet.entries import entry_coefficient
 from headfall_app.document import Document
 from headfall_app.entry.plan_rows import Row
+from headfall_app.entry.table_cells import change_column
 from headfall_app.entry.typed import value_or_none
 from headfall_app.words import lowered, words
 
@@ -53,6 +54,11 @@ def _valve(_case: Case, _row: Row, value: Any) -> str:
     return "none" if value is None else "cv" if value.cv is not None else "kv"
 
 
+def _column(case: Case, row: Row, value: Any) -> str:
+    # A table that does not say what it holds is known by its units.
+    return str(value or value_or_none(case, (*row.path[:-1], "rows"))[0][1].dimension)
+
+
 _CHOSEN = {
     "shape": lambda _case, _row, value: str(value.shape),
     "end": _end,
@@ -64,6 +70,7 @@ _CHOSEN = {
     "liquid": _liquid,
     "tailwater": _tailwater,
     "valve": _valve,
+    "column": _column,
     "flow_limit": lambda _case, _row, value: "none" if value is None else "asked",
 }
 
@@ -143,6 +150,8 @@ def _reshaped(case: Case, row: Row, choice: str) -> Case:
         return editing.change_headspace(case, choice)
     if row.change == "liquid":
         return editing.change_liquid(case, choice)
+    if row.change == "column":
+        return change_column(case, row.path[:-1], choice)
     if row.change == "flow_limit":
         return editing.change_flow_limit(case, choice == "asked")
     return editing.change_end_form(case, row.path, choice)
@@ -164,6 +173,6 @@ def _with_entry(case: Case, index: int, entry: str) -> Case:
 
 def _still(path: Path, changed: Path) -> Path | None:
     # What was typed wrongly below a part that changes its form has no field any more.
-    if changed[-1:] == ("kind",):
+    if changed[-1:] in (("kind",), ("column",)):
         changed = changed[:-1]
     return None if path[: len(changed)] == changed else path

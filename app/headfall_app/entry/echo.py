@@ -39,7 +39,9 @@ def echo_of(value: Quantity, row: Row, display: DisplayUnits) -> str:
     if (value.value == 0.0 and value.dimension != "temperature") or value.dimension not in _ECHOED:
         return ""
     kind = kind_of(row.path, value.dimension)
-    if known_unit(value.unit, value.dimension) == known_unit(display.unit(kind), value.dimension):
+    # A listed size is a name: its unit does not stand in the text.
+    is_named = not value.text.strip().endswith(value.unit)
+    if known_unit(value.unit, value.dimension) == known_unit(display.unit(kind), value.dimension) and not is_named:
         return ""
     return display.text(value.value, kind)
 

@@ -6,6 +6,7 @@ from PySide6.QtCore import Qt
 from PySide6.QtGui import QResizeEvent
 from PySide6.QtWidgets import QGridLayout, QSizePolicy, QWidget
 
+from headfall.case.model import Path
 from headfall_app.document import Document
 from headfall_app.entry.plan import Row
 from headfall_app.label import label
@@ -29,6 +30,8 @@ class Field(QWidget):
         self._reason = label("reason", 12, wraps=True)
         self._reason.setSizePolicy(QSizePolicy.Policy.Ignored, QSizePolicy.Policy.Minimum)
         self._reason.hide()
+        self._below = label("echo", 12)
+        self._below.hide()
         editor.setFont(font(13))
         editor.setFixedHeight(FIELD_HEIGHT)
         editor.setMinimumWidth(40)
@@ -47,6 +50,7 @@ class Field(QWidget):
         grid.addWidget(self.editor, 0, 1)
         grid.addWidget(self._echo, 0, 2, Qt.AlignmentFlag.AlignVCenter)
         grid.addWidget(self._reason, 1, 0, 1, 3)
+        grid.addWidget(self._below, 2, 1, 1, 2)
         grid.setColumnStretch(1, 1)
 
     def refresh(self) -> None:
@@ -89,6 +93,15 @@ class Field(QWidget):
         aside = self._echo.text() if width <= 0 else ""
         self.editor.setToolTip("\n".join(filter(None, (self.row.tip, aside))))
 
+    def go_to(self, path: Path) -> None:
+        """Put the cursor here; ``path`` may be that of a value inside this entry."""
+        self.editor.setFocus(Qt.FocusReason.OtherFocusReason)
+
+    def say_below(self, text: str) -> None:
+        """Say something under the editor; an empty text takes the place away."""
+        self._below.setText(text)
+        self._below.setVisible(bool(text))
+
     def echo_need(self) -> int:
         """Return the width that the echo's words take [px]."""
         return self._echo.fontMetrics().horizontalAdvance(self._echo.text())
@@ -103,6 +116,18 @@ class Field(QWidget):
         self._grid.addWidget(self.editor, 0, 1, 1, 2 if hidden else 1)
         if not hidden:
             self._grid.addWidget(self._echo, 0, 2, Qt.AlignmentFlag.AlignVCenter)
+
+    def tab_stops(self) -> tuple[QWidget, ...]:
+        """What the Tab key stops at in this row."""
+        return (self.editor,)
+
+    def show_faults(self, faults: dict[Path, str]) -> None:
+        """Show the fault at this entry, if there is one; at one that holds several values the first of theirs."""
+        own = faults.get(self.row.path, "")
+        if not own and self.row.kind in ("list", "number"):
+            depth = len(self.row.path)
+            own = next((sentence for path, sentence in faults.items() if path[:depth] == self.row.path), "")
+        self.show_reason(own)
 
     def show_reason(self, sentence: str) -> None:
         """Mark the row as wrong and say why under it; an empty sentence takes the mark away."""

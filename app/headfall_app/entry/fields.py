@@ -9,11 +9,13 @@ from headfall.quantities import Quantity
 from headfall_app.document import Document
 from headfall_app.entry.echo import echo_of, level_echo
 from headfall_app.entry.field import ECHO_WIDTH, GAP, Field
+from headfall_app.entry.handbook import handbook_says
 from headfall_app.entry.line import EntryLine
+from headfall_app.entry.offers import offer
 from headfall_app.entry.plan_rows import Row
 from headfall_app.entry.stepping import number_in, stepped, written
 from headfall_app.entry.typed import Refused, read_typed, unit_for, value_or_none
-from headfall_app.words import key_of, lowered, words
+from headfall_app.words import lowered
 
 
 def _change_of(row: Row) -> str:
@@ -30,14 +32,14 @@ class LineField(Field):
     def __init__(self, row: Row, document: Document, parent: QWidget | None = None) -> None:
         self.line = EntryLine()
         super().__init__(row, document, self.line, parent)
-        self.line.setPlaceholderText(row.default.replace("deg", "°") or words()["untyped"].get(key_of(row.path), ""))
+        offer(self.line, row)
         self.line.committed.connect(self.commit)
         self.line.reverted.connect(self.revert)
         self.line.stepped.connect(self.step)
         self.line.entered.connect(self.point)
         self.line.left.connect(document.end_gesture)
         self.line.left.connect(self.unpoint)
-        self._shown = ""
+        self._shown = self._handbook = ""
 
     def refresh(self) -> None:
         """Show what the document holds; a text that is being typed stays unless its entry was changed elsewhere."""
@@ -50,8 +52,16 @@ class LineField(Field):
                 if not self.line.hasFocus():
                     self.line.setCursorPosition(0)
             self.line.setModified(False)
+        self._say_untyped()
         self.show_echo()
         self.show_reason(wrong.sentence if wrong else "")
+
+    def _say_untyped(self) -> None:
+        """Say in the empty line what counts while nothing is typed."""
+        self._handbook = handbook_says(self.document, self.row)
+        said = self._handbook or self.row.default.replace("deg", "°") or self.row.untyped
+        if self.line.placeholderText() != said:
+            self.line.setPlaceholderText(said)
 
     def commit(self) -> None:
         """Read the line: a good text goes into the case, another one is kept beside its reason."""
@@ -97,16 +107,17 @@ class LineField(Field):
     def show_echo(self) -> None:
         """Say beside the line what its value is in the units of the answers, or that it is a default."""
         default = not self._shown and self.row.default and self.row.kind != "text"
+        said = "handbook" if not self._shown and self._handbook else "default" if default else ""
         self.set_untyped(not self._shown)
-        self.set_echo("default" if default else self.echo_text())
+        self.set_echo(said or self.echo_text())
 
     def echo_text(self) -> str:
         """Return the typed value in the units of the answers; empty where it is typed in them."""
         return ""
 
 
-class QuantityField(LineField):
-    """A quantity with its unit; a bare number takes the unit that stood here before."""
+class MeasuredField(LineField):
+    """A line that shares its width with the echo beside it, by what stands in both."""
 
     def __init__(self, row: Row, document: Document, parent: QWidget | None = None) -> None:
         super().__init__(row, document, parent)
@@ -120,6 +131,15 @@ class QuantityField(LineField):
             self.set_echo_width(ECHO_WIDTH)
         else:
             self.set_echo_width(echo if 0 < echo <= room - need else 0)
+
+
+class QuantityField(MeasuredField):
+    """A quantity with its unit; a bare number takes the unit that stood here before."""
+
+    def set_echo_width(self, width: int) -> None:
+        super().set_echo_width(width)
+        # What a listed size is inside must be seen: without room beside the line it stands below it.
+        self.say_below(f"{self.echo} inside" if width <= 0 and self.row.dimension == "bore" and self.echo else "")
 
     def text_of(self, value: object) -> str:
         return value.text if isinstance(value, Quantity) else ""
@@ -139,7 +159,7 @@ class QuantityField(LineField):
         return echo_of(value, self.row, self.document.display) if isinstance(value, Quantity) and not wrong else ""
 
 
-class NumberField(LineField):
+class NumberField(MeasuredField):
     """A plain number without a unit."""
 
     def text_of(self, value: object) -> str:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterator
 
+from PySide6.QtCore import Qt
 from PySide6.QtWidgets import QVBoxLayout, QWidget
 
 from headfall.case.model import Path
@@ -61,12 +62,15 @@ class GroupBox(QWidget):
         """Show the rows of the group; fields of rows that stay are kept, with their cursor."""
         if group == self.group:
             return
+        shown = {field.row for field in self._fields}
         kept = {field.row: field for field in self._fields}
         while self._rows.count():
             self._rows.takeAt(0)
         self._fields = [kept.pop(row) if row in kept else _FIELDS[row.kind](row, self._document) for row in group.rows]
         for field in self._fields:
             self._rows.addWidget(field)
+            if isinstance(field, ActionField) and field.row not in shown:
+                field.added.connect(self._go_to_part)
         for field in kept.values():
             field.hide()
             field.setParent(None)
@@ -85,7 +89,7 @@ class GroupBox(QWidget):
         """What the Tab key stops at, in order."""
         yield from self.heading.links
         for field in self.fields():
-            yield field.editor
+            yield from field.tab_stops()
 
     def refresh(self) -> None:
         """Show what the document holds."""
@@ -97,12 +101,19 @@ class GroupBox(QWidget):
         self.heading.set_beside(beside(self._document, self.group))
         faults = {fault.path: fault.sentence for fault in reversed(self._document.faults)}
         for field in self.fields():
-            field.show_reason(faults.get(field.row.path, ""))
+            field.show_faults(faults)
 
     @property
     def remark(self) -> str:
         """What is said below the heading; empty where nothing is."""
         return self._remark.text()
+
+    def _go_to_part(self, path: Path) -> None:
+        """Put the cursor into the first field of a part that was added."""
+        within = (field for field in self._fields if field.row.path[: len(path)] == path)
+        first = next((field for field in within if field.row.kind != "action"), None)
+        if first is not None:
+            first.editor.setFocus(Qt.FocusReason.OtherFocusReason)
 
     def _fold(self, folded: bool) -> None:
         self._body.setVisible(not folded)

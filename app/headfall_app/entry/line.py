@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from PySide6.QtCore import QEvent, Qt, Signal
 from PySide6.QtGui import QFocusEvent, QKeyEvent, QKeySequence
-from PySide6.QtWidgets import QLineEdit, QWidget
+from PySide6.QtWidgets import QCompleter, QLineEdit, QWidget
 
 _STEPS = {
     Qt.Key.Key_Up: 1,
@@ -32,6 +32,22 @@ class EntryLine(QLineEdit):
         # A file dropped on the window is to be opened, not written into a field.
         self.setAcceptDrops(False)
 
+    def offer(self, completer: QCompleter) -> None:
+        """Offer names while one is typed; Down opens the list, choosing one takes it in."""
+        self.setCompleter(completer)
+        # The line takes the highlighted name without counting it as typed; queued, since it does so after this signal.
+        completer.highlighted.connect(self._is_being_chosen, Qt.ConnectionType.QueuedConnection)
+        completer.activated.connect(self._take_chosen)
+
+    def _is_being_chosen(self, name: str) -> None:
+        if self.hasFocus() and self.text() == name:
+            self.setModified(True)
+
+    def _take_chosen(self, name: str) -> None:
+        self.setText(name)
+        self.setModified(True)
+        self.finish()
+
     def finish(self) -> None:
         """Take in what was typed, if anything was."""
         if self.isModified():
@@ -51,7 +67,10 @@ class EntryLine(QLineEdit):
 
     def keyPressEvent(self, event: QKeyEvent) -> None:
         step = _STEPS.get(Qt.Key(event.key()))
-        if step is not None and event.modifiers() in (
+        if event.key() == Qt.Key.Key_Down and self.completer() is not None and not _is_stepped(self.text()):
+            self.completer().setCompletionPrefix(self.text() if self.isModified() else "")
+            self.completer().complete()
+        elif step is not None and event.modifiers() in (
             Qt.KeyboardModifier.NoModifier,
             Qt.KeyboardModifier.KeypadModifier,
         ):
@@ -74,3 +93,10 @@ class EntryLine(QLineEdit):
             # The number stands at the beginning: it is what must be seen of a text that is too long.
             self.setCursorPosition(0)
         self.left.emit()
+
+
+def _is_stepped(text: str) -> bool:
+    """Whether Up and Down step a text: one that is a number and a unit, and no name."""
+    return (
+        text[:1].isdigit() and " sch" not in text and "SDR" not in text and "hygienic" not in text and "°" not in text
+    )

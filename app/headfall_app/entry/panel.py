@@ -15,6 +15,7 @@ from headfall_app.document import Document
 from headfall_app.entry.field import Field
 from headfall_app.entry.group import GroupBox
 from headfall_app.entry.plan import Group, groups_of, rows_hang_on
+from headfall_app.entry.plan_vessel import has_inside
 from headfall_app.entry.typed import value_or_none
 from headfall_app.paint.theme import Theme
 from headfall_app.undo import WrongEntry
@@ -59,6 +60,7 @@ class EntryPanel(QWidget):
         document.pointed_changed.connect(self._light)
         document.replaced.connect(self._begin_anew)
         self._follow()
+        self._open_what_is_typed()
 
     def set_theme(self, theme: Theme) -> None:
         """Take the colours of another theme; the style sheet of the window brings them."""
@@ -92,12 +94,20 @@ class EntryPanel(QWidget):
     def go_to(self, path: Path) -> None:
         """Unfold the group of an entry, bring it into view and put the cursor there."""
         box = self.box_of(path)
-        field = self.field_at(path)
+        field = self.field_at(path) or self._field_around(path)
         if box is None:
             return
         box.heading.set_folded(False)
-        (field.editor if field else box).setFocus(Qt.FocusReason.OtherFocusReason)
+        if field:
+            field.go_to(path)
+        else:
+            box.setFocus(Qt.FocusReason.OtherFocusReason)
         self._bring_into_view(field or box)
+
+    def _field_around(self, path: Path) -> Field | None:
+        """Return the field of the list, table or range that an entry stands in."""
+        around = (field for field in self.fields() if path[: len(field.row.path)] == field.row.path)
+        return next((field for field in around if field.row.kind in ("table", "list", "number")), None)
 
     def open_group(self, box: GroupBox) -> None:
         """Unfold a group, bring it to the top and put the cursor into its first field."""
@@ -111,6 +121,8 @@ class EntryPanel(QWidget):
     def box_of(self, path: Path) -> GroupBox | None:
         """Return the group an entry stands in."""
         fits = [box for box in self._boxes if any(row.path == path for row in box.group.rows)]
+        field = self._field_around(path)
+        fits += [box for box in self._boxes if field is not None and field.row in box.group.rows]
         fits += [box for box in self._boxes if box.group.path and path[: len(box.group.path)] == box.group.path]
         return fits[0] if fits else self._boxes[-1] if len(path) == 1 else None
 
@@ -126,7 +138,13 @@ class EntryPanel(QWidget):
     def _follow(self) -> None:
         self._show_document()
         if self._begins_anew:
+            self._open_what_is_typed()
             self._go_to_top()
+
+    def _open_what_is_typed(self) -> None:
+        for box in self._boxes:
+            if box.group.key == "inside":
+                box.heading.set_folded(not has_inside(self._document.case.vessel))
 
     def _show_document(self) -> None:
         before, self._seen = self._seen, (self._document.case, self._document.wrong, self._document.display)

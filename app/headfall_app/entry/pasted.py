@@ -1,84 +1,111 @@
-"""Rows from text that was copied elsewhere, or from a file: tabs, semicolons or commas between the columns."""
+"""Text that was copied elsewhere, or a file's: tabs, semicolons or commas between the columns, cut into cells."""
 
 from __future__ import annotations
 
+import csv
 import re
+from dataclasses import dataclass
 
-from headfall.case.values import read_quantity
-from headfall.quantities import Quantity, QuantityFault, is_bare_number
+from headfall.quantities import is_bare_number
+from headfall.quantities.units import known_unit
 
-_UNIT_IN_HEADING = re.compile(r"[\[(]\s*([^\])]+?)\s*[\])]|\s(\S+)$")
-_UNDERSCORED = re.compile(r"_(m3|m2|m|mm|ft|in|L|ft2|ft3)$")
-_SPELT = {"m2": "m²", "m3": "m³", "ft2": "ft²", "ft3": "ft³"}
+_KINDS_TRIED = ("length", "area", "volume", "temperature", "density", "dynamic_viscosity", "pressure", "flow", "time")
+_PARTS = re.compile(r"[\s,()\[\]_]+")
+_BRACKETS = re.compile(r"[\[(]([^\])]+)[\])]")
 
 
 class PasteRefused(Exception):
     """A text that is no table; the text of it is the sentence for the person who pasted."""
 
 
-def rows_from(
-    text: str, columns: tuple[str, ...], units: tuple[str, ...], least: int
-) -> tuple[tuple[Quantity, ...], ...]:
-    """Return the rows of a pasted text.
+@dataclass(frozen=True, slots=True)
+class Pasted:
+    """The cells of a pasted text, each with its unit, missing ones empty; and how many columns were too many."""
+
+    cells: tuple[tuple[str, ...], ...]
+    columns_left_out: int
+
+
+def cells_from(text: str, columns: tuple[str, ...], units: tuple[str, ...], least: int) -> Pasted:
+    """Return the cells of a pasted text.
 
     ``columns`` are the dimensions, ``units`` what a bare number takes where no heading names a unit, ``least`` how many
-    columns a row must have. A first line without any number is a heading. A comma is a decimal comma where tabs or
-    semicolons stand between the columns. Raises PasteRefused with the line and what was wrong with it.
+    columns a row must have. A first line without any number is a heading. A comma is a decimal comma where it stands
+    inside a cell and no cell has a decimal point. Raises PasteRefused where there are no rows of so many columns.
     """
     lines = [line for line in text.replace("\r\n", "\n").replace("\r", "\n").split("\n") if line.strip()]
     if not lines:
-        raise PasteRefused("Nothing was pasted. Copy two columns, level and value, and paste them here.")
-    separator = _separator(lines[-1])
-    cut = [_cells(line, separator) for line in lines]
-    first = 0
-    if not any(_numbers(cell) for cell in cut[0]):
-        units = tuple(_unit_of(cell) or unit for cell, unit in zip((*cut[0], *("",) * len(units)), units, strict=False))
-        first = 1
-    found = []
-    for number, cells in enumerate(cut[first:], first + 1):
-        cells = cells[: len(columns)]
-        if len(cells) < least:
-            raise PasteRefused(
-                f"Line {number} has {len(cells)} columns. {least} are wanted: {_named(columns[:least])}."
-            )
-        found.append(
-            tuple(_read(cell, column, unit, number) for cell, column, unit in zip(cells, columns, units, strict=False))
-        )
-    if not found:
-        raise PasteRefused("There is a heading and no row under it.")
+        raise PasteRefused(f"Nothing was pasted. Copy {_named(columns[:least])} elsewhere and paste them here.")
+    rows = _cut(lines)
+    heading: list[str] = []
+    if not any(_begins_with_number(cell) for cell in rows[0]):
+        heading, rows = rows[0], rows[1:]
+    if not rows:
+        raise PasteRefused("There is a heading and no row under it. Copy the rows too.")
+    if max(map(len, rows)) < least:
+        raise PasteRefused(f"No row has {least} columns. Copy {_named(columns[:least])} side by side.")
+    units = _units(heading, columns, units)
+    with_comma = not any("." in cell for row in rows for cell in row)
+    found = tuple(
+        tuple(_with_unit(row[at] if at < len(row) else "", unit, with_comma) for at, unit in enumerate(units))
+        for row in rows
+    )
+    return Pasted(found, max(0, max(map(len, rows)) - len(columns)))
+
+
+def is_one_cell(text: str) -> bool:
+    """Whether a text is the value of one cell and no table."""
+    return not any(mark in text.strip() for mark in "\t\n\r;")
+
+
+def _cut(lines: list[str]) -> list[list[str]]:
+    for mark in ("\t", ";", ","):
+        if any(mark in line for line in lines):
+            rows = [[cell.strip() for cell in row] for row in csv.reader(lines, delimiter=mark, skipinitialspace=True)]
+            break
+    else:
+        # Columns under one another with blanks between them.
+        rows = [line.split() if all(map(is_bare_number, line.split())) else [line.strip()] for line in lines]
+    for row in rows:
+        while row and not row[-1]:
+            row.pop()
+    return [row for row in rows if row]
+
+
+def _begins_with_number(cell: str) -> bool:
+    return bool(re.match(r"[-+−]?[\d.,]", cell))
+
+
+def _units(heading: list[str], columns: tuple[str, ...], usual: tuple[str, ...]) -> tuple[str, ...]:
+    """Return the unit of every column: the heading's, where it names one."""
+    found = list(usual)
+    for at, (title, column) in enumerate(zip(heading, columns, strict=False)):
+        for unit in _candidates(title):
+            if any(known_unit(unit, dimension) for dimension in column.split("|")):
+                found[at] = unit
+                break
+            if any(known_unit(unit, dimension) for dimension in _KINDS_TRIED):
+                kind = _named((column,))
+                raise PasteRefused(f"The heading names {unit}; the column is for {kind}. Choose what it holds first.")
     return tuple(found)
 
 
-def _separator(line: str) -> str:
-    return next((mark for mark in ("\t", ";", ",") if mark in line), "\t")
+def _candidates(title: str) -> list[str]:
+    """Return what may be the unit in a heading, likeliest first: in brackets, or its last words."""
+    words = [part for part in _PARTS.split(title) if part]
+    last = [" ".join(words[-2:]), words[-1]] if len(words) > 1 else []
+    return [*(inside.strip() for inside in _BRACKETS.findall(title)), *last]
 
 
-def _cells(line: str, separator: str) -> list[str]:
-    cells = [cell.strip().strip('"') for cell in line.split(separator)]
-    while cells and not cells[-1]:
-        cells.pop()
-    return cells
-
-
-def _numbers(cell: str) -> bool:
-    return bool(re.match(r"[-+−]?[\d.,]", cell.strip()))
-
-
-def _unit_of(heading: str) -> str:
-    found = _UNIT_IN_HEADING.search(heading.strip())
-    if found is not None:
-        return (found[1] or found[2] or "").strip()
-    underscored = _UNDERSCORED.search(heading.strip())
-    return _SPELT.get(underscored[1], underscored[1]) if underscored else ""
-
-
-def _read(cell: str, column: str, unit: str, line: int) -> Quantity:
-    text = f"{cell} {unit}".strip() if is_bare_number(cell) else cell
-    try:
-        return read_quantity(text, column)
-    except QuantityFault as fault:
-        raise PasteRefused(f"Line {line}: {fault.sentence}") from None
+def _with_unit(cell: str, unit: str, with_comma: bool) -> str:
+    number = cell
+    if with_comma and cell.count(",") == 1:
+        # What comes from a table has no commas between thousands beside decimal ones: the comma is a decimal comma.
+        number = cell.replace(",", ".")
+    return f"{number} {unit}".strip() if is_bare_number(number) else cell
 
 
 def _named(columns: tuple[str, ...]) -> str:
-    return ", ".join(column.split("|")[0].replace("_", " ") for column in columns)
+    names = [column.split("|")[0].replace("_", " ").removeprefix("dynamic ") for column in columns]
+    names = ["level" if name == "length" else name for name in names]
+    return " and ".join(filter(None, (", ".join(names[:-1]), names[-1])))

@@ -8,9 +8,12 @@ from typing import Any
 from headfall.case.attributes import attributes_of
 from headfall.case.between_weirs import SIZES, TAKEN
 from headfall.case.model import Case, CoefficientRange, Path, Pipe, PipeSection, ReceivingVessel, Weir
-from headfall_app.entry.plan_rows import Row, add_row, choice_row, part_row, plain_row, plain_rows
+from headfall.outlet.handbook_losses import materials
+from headfall_app.entry.plan_rows import Row, add_row, choice_row, part_row, plain_row, plain_rows, tip_of
 from headfall_app.entry.plan_vessel import vessel_rows
-from headfall_app.words import key_of, words
+from headfall_app.words import key_of, label_of, words
+
+USUAL_MATERIAL = "commercial steel"
 
 
 def outlet_rows(case: Case, index: int) -> Iterator[Row]:
@@ -38,6 +41,8 @@ def outlet_rows(case: Case, index: int) -> Iterator[Row]:
             yield from _section_rows(path, outlet)
         elif name == "tailwater":
             yield from _tailwater_rows(here, outlet.tailwater)
+        elif name == "material":
+            yield _material_row(here)
         else:
             yield from plain_row(here, known[name].metadata, variant=_variant(outlet))
 
@@ -59,6 +64,12 @@ def _applies(case: Case, outlet: Any, name: str, key: str) -> bool:
     # An attribute that is typed is shown in any case, so that it can be taken out again.
     typed = getattr(outlet, key.rsplit(".", 1)[-1]) is not None
     return typed or getattr(outlet, rule["attribute"]) in rule["values"]
+
+
+def _material_row(path: Path, usual: str = USUAL_MATERIAL) -> Row:
+    """Return the choice of a material; one that is typed in the file by another name is shown as it is."""
+    names = tuple((name, name.capitalize()) for name in materials())
+    return Row(path, "choice", label_of(path), default=usual, choices=names, tip=tip_of(key_of(path)))
 
 
 def _friction_shown(part: Any, name: str) -> bool:
@@ -88,7 +99,9 @@ def _section_rows(path: Path, pipe: Any) -> Iterator[Row]:
         inner = (*here, index)
         yield part_row(inner, f"Section {index + 2}", "section")
         for name in ("bore", "length", "material", "roughness", "friction_factor"):
-            if name in ("bore", "length") or _friction_shown(section, name):
+            if name == "material" and _friction_shown(section, name):
+                yield _material_row((*inner, name), pipe.material or USUAL_MATERIAL)
+            elif name in ("bore", "length") or (name != "material" and _friction_shown(section, name)):
                 yield from plain_row((*inner, name), known[name].metadata)
         yield from _fitting_rows(inner, section)
     yield add_row(here, "a length of another bore")

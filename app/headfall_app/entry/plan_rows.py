@@ -18,6 +18,7 @@ class Row:
     ``kind`` is ``quantity``, ``number``, ``text``, ``choice``, ``list`` (quantities in one line), ``action`` (a word
     that does something to a list) or ``table``; ``change`` says what choosing does: ``set`` replaces the value, the
     others (``shape``, ``end``, ``opening``, ``coefficient``, ``headspace`` and so on) reshape the case in place.
+    ``untyped`` is what an empty line says where there is no default.
     """
 
     path: Path
@@ -30,6 +31,7 @@ class Row:
     change: str = "set"
     whole: bool = False
     tip: str = ""
+    untyped: str = ""
 
 
 @dataclass(frozen=True, slots=True)
@@ -58,18 +60,20 @@ def plain_row(path: Path, facts: Mapping[str, Any], variant: str = "") -> Iterat
         return
     label, tip = label_of(path, variant), tip_of(key, variant)
     default, required = as_typed(facts.get("default")), bool(facts.get("required"))
+    untyped = untyped_of(key, variant)
     if key in words()["choices"]:
         yield choice_row(path, key, "set", default=default)
     elif "rows" in facts:
         yield Row(path, "table", label, required=required, tip=tip)
     elif "quantities" in facts:
-        yield Row(path, "list", label, str(facts["quantities"]), default, tip=tip)
+        yield Row(path, "list", label, str(facts["quantities"]), default, tip=tip, untyped=untyped)
     elif "dimension" in facts:
-        yield Row(path, "quantity", label, facts["dimension"], default, required, tip=tip)
+        yield Row(path, "quantity", label, facts["dimension"], default, required, tip=tip, untyped=untyped)
     elif "number" in facts or "integer" in facts:
-        yield Row(path, "number", label, default=default, required=required, whole="integer" in facts, tip=tip)
+        whole = "integer" in facts
+        yield Row(path, "number", label, default=default, required=required, whole=whole, tip=tip, untyped=untyped)
     elif "text" in facts:
-        yield Row(path, "text", label, default=default, tip=tip)
+        yield Row(path, "text", label, default=default, tip=tip, untyped=untyped)
 
 
 def choice_row(path: Path, key: str, change: str, *, label: str = "", default: str = "") -> Row:
@@ -100,6 +104,13 @@ def tip_of(key: str, variant: str = "") -> str:
     tips = words()["tips"]
     tip: str = tips.get(f"{key}.{variant}") or tips.get(key, "")
     return tip
+
+
+def untyped_of(key: str, variant: str = "") -> str:
+    """Return what an empty line of an entry says."""
+    said = words()["untyped"]
+    found: str = said.get(f"{key}.{variant}") or said.get(key, "")
+    return found
 
 
 def as_typed(default: Any) -> str:

@@ -6,7 +6,7 @@ from collections.abc import Iterator
 from typing import Any
 
 from headfall.case.attributes import attributes_of
-from headfall.case.model import Path, Stack
+from headfall.case.model import Path, Stack, TableVessel
 from headfall_app.entry.plan_rows import Row, add_row, choice_row, part_row, plain_row, plain_rows
 from headfall_app.words import choices_of, label_of
 
@@ -26,25 +26,45 @@ def vessel_rows(path: Path, vessel: Any) -> Iterator[Row]:
             yield from _end_rows(here, vessel, name, attribute.metadata)
         elif name == "parts" and isinstance(vessel, Stack):
             yield from _stack_rows(here, vessel)
+        elif name == "column":
+            yield choice_row(here, "vessel.column", "column")
+        elif name == "between" and not _holds_areas(vessel):
+            continue
         else:
             yield from plain_row(here, attribute.metadata)
     if within:
         yield from beside_rows(path, vessel, only_typed=True)
 
 
+def has_inside(vessel: Any) -> bool:
+    """Whether anything was typed of the wall, the lining and what takes space inside."""
+    return any(getattr(vessel, name, None) is not None for name in _BESIDE)
+
+
 def beside_rows(path: Path, vessel: Any, only_typed: bool = False) -> Iterator[Row]:
-    """Return the rows for wall and lining, and for what takes space inside."""
+    """Return the rows for wall and lining, and for what takes space inside.
+
+    With ``only_typed`` a word stands for a wall and lining that are not.
+    """
     known = attributes_of(type(vessel))
-    for name in ("sizes", "wall", "lining"):
-        if name in known and not (only_typed and getattr(vessel, name) is None):
-            yield from plain_row((*path, name), known[name].metadata)
-    if only_typed:
-        return
+    wall = [name for name in ("sizes", "wall", "lining") if name in known]
+    if only_typed and all(getattr(vessel, name) is None for name in wall):
+        if wall:
+            yield Row((*path, "sizes"), "action", "", choices=(("inside", "wall and lining"),), change="begin")
+        wall = []
+    for name in wall:
+        yield from plain_row((*path, name), known[name].metadata)
     for index, body in enumerate(vessel.displacement or ()):
         here = (*path, "displacement", index)
         yield part_row(here, f"Internals {index + 1}", "body")
         yield from plain_rows(here, body)
-    yield add_row((*path, "displacement"), "space taken inside")
+    if not only_typed:
+        yield add_row((*path, "displacement"), "space taken inside")
+
+
+def _holds_areas(table: TableVessel) -> bool:
+    """Whether a rule between the rows means anything: only areas are joined by one."""
+    return table.column == "area" or (table.column is None and table.rows[0][1].dimension == "area")
 
 
 def _stack_rows(path: Path, stack: Stack) -> Iterator[Row]:

@@ -5,9 +5,12 @@ from __future__ import annotations
 from collections.abc import Iterator
 from dataclasses import dataclass
 
+import numpy as np
+
 from headfall.answers import Answers
 from headfall.case.model import Path
 from headfall.quantities import DisplayUnits
+from headfall.quantities.display import NO_BREAK
 
 
 @dataclass(frozen=True, slots=True)
@@ -30,7 +33,7 @@ def level_marks(answers: Answers, display: DisplayUnits, now: float | None) -> t
     system = answers.system
 
     def mark(key: str, name: str, level: float, path: Path | None = None) -> LevelMark:
-        return LevelMark(key, name, level, display.number(level, "level"), path)
+        return LevelMark(key, name, level, _shown(answers, display, level), path)
 
     found = [
         mark("overflow", "Overflow", system.overflow, ("levels", "overflow")),
@@ -46,6 +49,19 @@ def level_marks(answers: Answers, display: DisplayUnits, now: float | None) -> t
     found.extend(mark("outlet", name, level) for name, level in _outlet_levels(answers))
     order = {"overflow": 0, "start": 1, "now": 2, "stop": 3, "settles": 4, "outlet": 5}
     return tuple(sorted(found, key=lambda one: (-one.level, order[one.key])))
+
+
+def _shown(answers: Answers, display: DisplayUnits, level: float) -> str:
+    """A level as the case wants it shown: a height, a part of the capacity, a volume, a height on the site datum."""
+    system, how = answers.system, answers.case.levels.shown
+    if how == "site" and system.site_datum is not None:
+        return display.number(level + system.site_datum, "level")
+    if how in ("percent", "volume"):
+        volume = float(system.profile.volume(np.array(level)))
+        if how == "volume":
+            return display.text(volume, "volume")
+        return f"{100.0 * volume / system.profile.capacity:.1f}{NO_BREAK}%"
+    return display.number(level, "level")
 
 
 def _outlet_levels(answers: Answers) -> Iterator[tuple[str, float]]:
