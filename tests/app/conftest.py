@@ -90,6 +90,7 @@ class Answering(Questions):
     open: Path | None = None
     save: Path | None = None
     sheet: Path | None = None
+    table: Path | None = None
     leaving: str = STAY
     asked: list[str] = field(default_factory=list)
 
@@ -104,6 +105,10 @@ class Answering(Questions):
     def sheet_to_write(self, parent: QWidget, suggested: str) -> Path | None:
         self.asked.append(f"sheet {Path(suggested).name}")
         return self.sheet
+
+    def table_to_write(self, parent: QWidget, suggested: str) -> Path | None:
+        self.asked.append(f"table {Path(suggested).name}")
+        return self.table
 
     def unsaved(self, parent: QWidget, title: str) -> str:
         self.asked.append(f"unsaved {title}")

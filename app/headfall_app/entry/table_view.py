@@ -84,6 +84,8 @@ class TableView(QTableView):
             self._paste(QGuiApplication.clipboard().text())
         elif event.matches(QKeySequence.StandardKey.Copy) and here.isValid():
             QGuiApplication.clipboard().setText(str(here.data(Qt.ItemDataRole.EditRole)))
+        elif event.key() == Qt.Key.Key_Delete and here.isValid():
+            self.model().setData(here, "")
         elif event.key() == Qt.Key.Key_Insert:
             self._add_row()
         elif event.key() in (Qt.Key.Key_Return, Qt.Key.Key_Enter) and here.isValid():
