@@ -312,6 +312,23 @@ def test_settings_that_make_no_sense_count_as_not_set(tmp_path: Path) -> None:
     assert settings.geometry.isEmpty()
 
 
+def test_an_example_opened_as_a_file_has_no_file_of_its_own(window: Window) -> None:
+    assert window.open_file(resource_path("examples/header_tank.headfall"))
+    assert window.document.file is None
+    assert window.head.saved_text == "No file yet"
+    assert window.settings.recent == []
+
+
+def test_pipes_and_weirs_are_added_from_the_menu(window: Window, wait_for: Wait) -> None:
+    edit = menu_of(window, "Edit")
+    action(edit, "Add a pipe").trigger()
+    action(edit, "Add a weir").trigger()
+    assert [outlet.kind for outlet in window.document.case.outlets] == ["orifice", "pipe", "weir"]
+    name = window.entry.field_at(("outlets", 2, "name"))
+    assert name is not None
+    wait_for(name.editor.hasFocus)
+
+
 def test_an_example_is_not_written_over(window: Window, questions: Answering, type_into: Type, tmp_path: Path) -> None:
     example = resource_path("examples/header_tank.headfall")
     before = example.read_bytes()

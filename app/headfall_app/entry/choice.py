@@ -102,5 +102,6 @@ class ChoiceField(Field):
             place = self.box.count() - 1
         self.box.setCurrentIndex(place)
         self.set_untyped(not value)
-        wrong = self.document.wrong.get(self.row.path)
+        # A level outside is typed in a row of its own at the same path.
+        wrong = None if self.row.change == "tailwater" else self.document.wrong.get(self.row.path)
         self.show_reason(wrong.sentence if wrong else "")

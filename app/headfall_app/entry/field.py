@@ -11,7 +11,6 @@ from headfall_app.document import Document
 from headfall_app.entry.plan import Row
 from headfall_app.label import label
 from headfall_app.paint.fonts import font
-from headfall_app.words import name_of
 
 LABEL_WIDTH, ECHO_WIDTH, ROW_HEIGHT, FIELD_HEIGHT, GAP = 92, 64, 30, 26, 8
 
@@ -35,7 +34,7 @@ class Field(QWidget):
         editor.setFont(font(13))
         editor.setFixedHeight(FIELD_HEIGHT)
         editor.setMinimumWidth(40)
-        editor.setAccessibleName(name_of(row.path) or row.label)
+        editor.setAccessibleName(row.name)
         editor.setToolTip(row.tip)
         editor.setAccessibleDescription(row.tip)
         self.setFocusProxy(editor)
@@ -101,6 +100,14 @@ class Field(QWidget):
         """Say something under the editor; an empty text takes the place away."""
         self._below.setText(text)
         self._below.setVisible(bool(text))
+
+    def label_need(self) -> int:
+        """Return the width that the label's words take [px]."""
+        return self._label.fontMetrics().horizontalAdvance(self._label.text())
+
+    def label_room(self) -> int:
+        """Return the width that the label has [px]."""
+        return self._label.width()
 
     def echo_need(self) -> int:
         """Return the width that the echo's words take [px]."""

@@ -83,7 +83,7 @@ class GroupBox(QWidget):
 
     def field_at(self, path: Path) -> Field | None:
         """Return the field of an entry; None where this group does not show it."""
-        return next((field for field in self.fields() if field.row.path == path), None)
+        return max((field for field in self.fields() if field.row.path == path), key=_rank, default=None)
 
     def tab_stops(self) -> Iterator[QWidget]:
         """What the Tab key stops at, in order."""
@@ -101,7 +101,7 @@ class GroupBox(QWidget):
         self.heading.set_beside(beside(self._document, self.group))
         faults = {fault.path: fault.sentence for fault in reversed(self._document.faults)}
         for field in self.fields():
-            field.show_faults(faults)
+            field.show_faults(faults if self.field_at(field.row.path) is field else {})
 
     @property
     def remark(self) -> str:
@@ -113,6 +113,8 @@ class GroupBox(QWidget):
         within = (field for field in self._fields if field.row.path[: len(path)] == path)
         first = next((field for field in within if field.row.kind != "action"), None)
         if first is not None:
+            # It was put in place just now: shown only by the next turn of the event loop, unless it is asked for here.
+            first.show()
             first.editor.setFocus(Qt.FocusReason.OtherFocusReason)
 
     def _fold(self, folded: bool) -> None:
@@ -136,3 +138,7 @@ class GroupBox(QWidget):
         refusal = remove_outlet(self._document, int(self.group.path[1]))
         self._remark.setText(refusal)
         self._remark.setVisible(bool(refusal))
+
+
+def _rank(field: Field) -> int:
+    return field.row.rank

@@ -48,6 +48,14 @@ class EntryLine(QLineEdit):
         self.setModified(True)
         self.finish()
 
+    def _close_offers(self) -> bool:
+        """Close the list of names; returns whether one was open."""
+        popup = self.completer().popup() if self.completer() is not None else None
+        is_open = popup is not None and popup.isVisible()
+        if popup is not None and is_open:
+            popup.hide()
+        return is_open
+
     def finish(self) -> None:
         """Take in what was typed, if anything was."""
         if self.isModified():
@@ -76,6 +84,8 @@ class EntryLine(QLineEdit):
         ):
             self.finish()
             self.stepped.emit(step)
+        elif event.key() == Qt.Key.Key_Escape and self._close_offers():
+            return
         elif event.key() == Qt.Key.Key_Escape:
             self.reverted.emit()
         else:

@@ -14,7 +14,7 @@ from headfall_app.entry.line import EntryLine
 from headfall_app.entry.plan_rows import Row
 from headfall_app.paint.fonts import font
 
-_SHOWN = 10
+_SHOWN, _WIDTH = 10, 190
 
 
 def offer(line: EntryLine, row: Row) -> None:
@@ -67,4 +67,5 @@ def _completer(names: tuple[str, ...], line: EntryLine) -> QCompleter:
     popup = completer.popup()
     assert popup is not None
     popup.setFont(font(13))
+    popup.setMinimumWidth(_WIDTH)
     return completer

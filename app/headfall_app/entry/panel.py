@@ -89,7 +89,8 @@ class EntryPanel(QWidget):
 
     def field_at(self, path: Path) -> Field | None:
         """Return the field of an entry; None where none is shown."""
-        return next((field for field in self.fields() if field.row.path == path), None)
+        found = (box.field_at(path) for box in self._boxes)
+        return next((field for field in found if field is not None), None)
 
     def go_to(self, path: Path) -> None:
         """Unfold the group of an entry, bring it into view and put the cursor there."""

@@ -37,6 +37,8 @@ def cells_from(text: str, columns: tuple[str, ...], units: tuple[str, ...], leas
     if not lines:
         raise PasteRefused(f"Nothing was pasted. Copy {_named(columns[:least])} elsewhere and paste them here.")
     rows = _cut(lines)
+    if len(rows) > 1 and not any(_begins_with_number(cell) for row in rows for cell in row):
+        raise PasteRefused(f"There is no number in it. Copy {_named(columns[:least])} elsewhere and paste them here.")
     heading: list[str] = []
     if not any(_begins_with_number(cell) for cell in rows[0]):
         heading, rows = rows[0], rows[1:]

@@ -8,7 +8,7 @@ from typing import Any
 
 from headfall.case.attributes import attributes_of
 from headfall.case.model import Path
-from headfall_app.words import choices_of, key_of, label_of, words
+from headfall_app.words import choices_of, key_of, label_of, lowered, name_of, words
 
 
 @dataclass(frozen=True, slots=True)
@@ -32,6 +32,21 @@ class Row:
     whole: bool = False
     tip: str = ""
     untyped: str = ""
+
+    @property
+    def name(self) -> str:
+        """The row's name apart from its group: ``Outlet 1, level of plane``."""
+        name, label = name_of(self.path), lowered(label_of(self.path))
+        if self.change == "shape" and len(self.path) > 1:
+            return f"{name}, shape"
+        if self.label and name.endswith(f", {label}"):
+            return name.removesuffix(label) + lowered(self.label)
+        return name or self.label
+
+    @property
+    def rank(self) -> int:
+        """Which of two rows at one path stands for it: that which holds its value, before a choice, before a word."""
+        return ("action", "choice").index(self.kind) if self.kind in ("action", "choice") else 2
 
 
 @dataclass(frozen=True, slots=True)

@@ -88,8 +88,10 @@ class TableView(QTableView):
             self.model().setData(here, "")
         elif event.key() == Qt.Key.Key_Insert:
             self._add_row()
-        elif event.key() in (Qt.Key.Key_Return, Qt.Key.Key_Enter) and here.isValid():
-            self.edit(here)
+        elif event.key() in (Qt.Key.Key_Return, Qt.Key.Key_Enter):
+            # The key that ends an editor comes by here too, before the editor has closed.
+            if here.isValid() and self.state() != QTableView.State.EditingState:
+                self.edit(here)
         else:
             super().keyPressEvent(event)
 

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from dataclasses import fields, is_dataclass
 from typing import Any
 
@@ -41,6 +42,8 @@ def read_typed(case: Case, row: Row, text: str) -> object:
         raise Refused(refusal.faults[0].sentence) from refusal
 
 
+# A comma between quantities, not the decimal comma inside one.
+_COMMA = re.compile(r",(?=\s)|(?<=[^\d\s]),")
 _RANGED = ("entry_loss", "loss")
 _ALIKE = {"level": ("length",), "bore": ("length",)}
 
@@ -63,21 +66,31 @@ def _read_range(case: Case, row: Row, text: str) -> LossRange:
 
 def _read_list(case: Case, row: Row, text: str) -> object:
     """Return several quantities typed in one line, None for an empty one; a bare number takes the unit behind it."""
-    parts = _cut(text.replace(", ", ";"))
+    parts = _cut(_COMMA.sub(";", text))
     if not parts:
         return None
     found: list[Quantity] = []
-    unit = ""
+    unit = _unit_of_list(case, row, parts)
     try:
         for part in reversed(parts):
-            quantity = read_quantity(
-                _with_unit(part, unit, row.dimension) if is_bare_number(part) else part, row.dimension
-            )
-            unit = quantity.unit
-            found.append(quantity)
+            typed = _with_unit(part, unit, row.dimension) if is_bare_number(part) else part
+            found.append(read_quantity(typed, row.dimension))
+            unit = found[-1].unit
     except QuantityFault as fault:
         raise Refused(fault.sentence) from fault
     return tuple(reversed(found))
+
+
+def _unit_of_list(case: Case, row: Row, parts: list[str]) -> str:
+    """Return the unit that bare numbers at the end of a list take: the last one typed, or the one that stood there."""
+    for part in reversed(parts):
+        if not is_bare_number(part):
+            try:
+                return read_quantity(part, row.dimension).unit
+            except QuantityFault:
+                return ""
+    former = value_or_none(case, row.path)
+    return former[-1].unit if former else ""
 
 
 def unit_for(case: Case, row: Row) -> str:
