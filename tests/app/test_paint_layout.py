@@ -18,7 +18,7 @@ from headfall.case.model import Case
 from headfall.files import case_from_text
 from headfall.quantities import display_units
 from headfall.study import solve
-from headfall_app.paint import jets, lettering
+from headfall_app.paint import labels, lettering
 from headfall_app.paint.curve import curve_points, remark_box
 from headfall_app.paint.cut import Across, shown_stretches
 from headfall_app.paint.flags import GAP, TALL, placed_flags, spread
@@ -244,7 +244,7 @@ def test_the_words_of_a_side_outlet_stay_left_of_the_staffs_numbers(
         written.append((text, lettering.text_box(at, text, 12, 400, align)))
         return written[-1][1]
 
-    monkeypatch.setattr(jets.lettering, "write", write)
+    monkeypatch.setattr(labels.lettering, "write", write)
     image = QImage(*size, QImage.Format.Format_RGB32)
     painter = QPainter(image)
     paint_jets(painter, frame, shown, theme("light"))

@@ -20,6 +20,7 @@ from headfall_app.paint.theme import Theme
 from headfall_app.paint.ticks import mark_text
 
 WIDTH = 2.2
+_WAVE_LENGTH, _WAVE_HEIGHT = 34.0, 4.5
 
 
 def paint_grid(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
@@ -145,6 +146,8 @@ def remark_box(frame: Frame, scene: Scene, taken: Sequence[QRectF] = ()) -> QRec
     left, top, right, bottom = frame.plot
     text = lettering.elided(scene.remark, right - left - 8.0, 12, 600)
     level = scene.settles_at if scene.settles_at is not None else scene.surface
+    if scene.curve.ends == "surging":
+        level = float(scene.curve.level[-1])
     lines = [frame.row(mark.level) for mark in scene.marks if mark.key != "now"]
     ends = [right - 12.0 - text_width(text, 12, 600), right]
     runs = (scene.curve_low, scene.curve_high, scene.curve)
@@ -157,11 +160,11 @@ def remark_box(frame: Frame, scene: Scene, taken: Sequence[QRectF] = ()) -> QRec
 
     below = [max(rows) + 15.0 + step for step in range(0, 40, 2)]
     above = [min(rows) - 15.0 - step for step in range(0, 120, 2)]
-    for row in (*below, *above):
-        clear = all(abs(row - line) > 10.0 for line in lines) and not any(box(row).intersects(other) for other in words)
-        if clear and top + 8.0 < row < bottom - 6.0:
-            return box(row)
-    return box(min(max(above[0], top + 8.0), bottom - 8.0))
+    inside = [row for row in (*below, *above) if top + 8.0 < row < bottom - 6.0]
+    free = [row for row in inside if not any(box(row).intersects(other) for other in words)]
+    clear = [row for row in free if all(abs(row - line) > 10.0 for line in lines)]
+    # A level line under the plate is borne, other words are not.
+    return box((clear or free or [min(max(above[0], top + 8.0), bottom - 8.0)])[0])
 
 
 def paint_remark(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, taken: Sequence[QRectF] = ()) -> None:
@@ -173,6 +176,20 @@ def paint_remark(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, ta
     plate = theme.colour("surface")
     at = QPointF(box.right(), box.center().y())
     lettering.write(painter, at, text, theme.colour("ink"), 12, 600, lettering.RIGHT, plate=plate)
+
+
+def paint_surge(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """Mark the end of a run that surges: a small wave about the level it ends at."""
+    if scene.curve.ends != "surging" or frame.plot is None:
+        return
+    x = frame.time_x(float(scene.curve.time[-1]))
+    row = frame.row(float(scene.curve.level[-1])) + 0.5
+    along = np.linspace(0.0, 1.0, 33)
+    wave = polygon(x + _WAVE_LENGTH * (along - 0.5), row + _WAVE_HEIGHT * np.sin(4.0 * np.pi * along))
+    painter.setPen(pen(theme.colour("surface"), 5.0))
+    painter.drawPolyline(wave)
+    painter.setPen(pen(theme.colour("accent"), 1.8))
+    painter.drawPolyline(wave)
 
 
 def paint_cursor_dot(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, focused: bool = False) -> None:

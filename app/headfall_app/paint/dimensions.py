@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 from contextlib import contextmanager
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 from PySide6.QtCore import QLineF, QPointF, QRectF
 from PySide6.QtGui import QPainter
@@ -12,19 +12,20 @@ from PySide6.QtGui import QPainter
 from headfall_app.paint import lettering
 from headfall_app.paint.dimension_plan import COLUMN, ROW
 from headfall_app.paint.fonts import text_width
-from headfall_app.paint.jets import landing
 from headfall_app.paint.kept import Kept, paint_kept, vessel_box, vessel_key
 from headfall_app.paint.layout import Frame
-from headfall_app.paint.outline_geometry import surface_span
+from headfall_app.paint.outline_geometry import floor_under, surface_span
+from headfall_app.paint.pipe_run import landing, pipe_run, pit_box, receiver_box
 from headfall_app.paint.scene import Scene
 from headfall_app.paint.scene_dimensions import SizeLine
 from headfall_app.paint.strokes import level_line, pen, plumb_line
 from headfall_app.paint.theme import Theme
-from headfall_app.paint.waterways import pipe_run, run_boxes
 
 _CLEARANCE = 5.0
 _STROKE = 3.5
 _OVERSHOOT = 4.0
+_PAST = 0.0
+"""A share at which no text has room in the line: it stands past an end."""
 _MARGIN = 100
 """How far about the vessel its first dimension lines may reach [px]."""
 
@@ -53,7 +54,7 @@ def above_row(frame: Frame, index: int) -> float:
 
 
 @dataclass(frozen=True, slots=True)
-class _Line:
+class Line:
     """A dimension line on the page: along its row, or turned upwards about ``column``."""
 
     ends: tuple[float, float]
@@ -95,16 +96,16 @@ def paint_dimensions(painter: QPainter, frame: Frame, scene: Scene, theme: Theme
         for size, column in frame.plan.columns:
             _upright_witness(on, frame, scene, size, _column(frame, column), theme)
         for size, row in _rows(frame):
-            _level_witness(on, frame, size, row, theme)
+            _level_witness(on, frame, scene, size, row, theme)
         for line in lines:
-            _paint_line(on, line, theme)
+            paint_line(on, line, theme)
 
     box = vessel_box(
         frame, _MARGIN + round(COLUMN) * max(frame.plan.column_count, frame.plan.below_count, frame.plan.above_count)
     )
     paint_kept(kept, painter, "dimensions", (tuple(lines), vessel_key(frame, scene, theme)), box, all_lines)
     for line in lines:
-        _write(painter, line, theme)
+        write_line(painter, line, theme)
     reach = landing(frame, scene)
     if reach is not None and reach[1] - reach[0] > 14.0:
         row = below_row(frame, 0)
@@ -113,9 +114,9 @@ def paint_dimensions(painter: QPainter, frame: Frame, scene: Scene, theme: Theme
             plumb_line(painter, end, frame.bottom + 9.0, row + _OVERSHOOT, witness)
         room = frame.flags_left - 6.0 - reach[1] - 9.0
         text = reach[2] if text_width(reach[2], 12) <= room else reach[2].removeprefix("reach ")
-        line = _Line(reach[:2], row, text, False, 1.0)
-        _paint_line(painter, line, theme)
-        _write(painter, line, theme)
+        line = Line(reach[:2], row, text, False, 1.0)
+        paint_line(painter, line, theme)
+        write_line(painter, line, theme)
 
 
 def _column(frame: Frame, column: int) -> float:
@@ -127,34 +128,37 @@ def _rows(frame: Frame) -> Iterator[tuple[SizeLine, float]]:
     yield from ((size, above_row(frame, index)) for size, index in frame.plan.above)
 
 
-def _upright_lines(frame: Frame, scene: Scene) -> Iterator[_Line]:
+def _upright_lines(frame: Frame, scene: Scene) -> Iterator[Line]:
     for size, column in frame.plan.columns:
         low, high = sorted((size.start[1], size.end[1]))
         ends = (-float(frame.row(low)), -float(frame.row(high)))
         outwards = -1.0 if low + high < scene.height else 1.0
-        yield _Line(ends, 0.0, size.text, size.lit, outwards, _column(frame, column))
+        yield Line(ends, 0.0, size.text, size.lit, outwards, _column(frame, column))
 
 
-def _level_lines(frame: Frame, scene: Scene) -> Iterator[_Line]:
+def _level_lines(frame: Frame, scene: Scene) -> Iterator[Line]:
     for size, row in _rows(frame):
         left, right = sorted((frame.across.x(size.start[0]), frame.across.x(size.end[0])))
         outwards = -1.0 if left + right < frame.across.left + frame.across.right - 1.0 else 1.0
         text = shown_text(frame, scene, size)
-        yield _Line(
-            (left, right), row, text, size.lit, outwards, share=_clear_share(frame, scene, left, right, row, text)
-        )
+        line = Line((left, right), row, text, size.lit, outwards)
+        yield _clear_of_pipes(frame, scene, line) if row > frame.bottom else line
 
 
-def _clear_share(frame: Frame, scene: Scene, left: float, right: float, row: float, text: str) -> float:
-    """Where a text stands clear of the pipes that run down past its line: in the middle, else at a quarter."""
-    half = 0.5 * text_width(text, 12) + 8.0
-    boxes = [box for one in scene.outlets if one.bores for box in run_boxes(pipe_run(frame, scene, one))]
-    struck = [box for box in boxes if box.top() - 10.0 < row < box.bottom() + 10.0]
-    for share in (0.5, 0.25, 0.75):
-        middle = left + share * (right - left)
-        if not any(box.left() < middle + half and box.right() > middle - half for box in struck):
-            return share
-    return 0.5
+def _clear_of_pipes(frame: Frame, scene: Scene, line: Line) -> Line:
+    """Move a text off the pipes that run down past its line: to a quarter, else past an end."""
+    runs = [pipe_run(frame, scene, one) for one in scene.outlets if one.is_pipe]
+    boxes = [box for run in runs for box in (*run.boxes, run.fall_box)]
+    boxes += [pit_box(frame, scene, one) for one in scene.outlets] + [receiver_box(frame, scene)]
+    struck = [box for box in boxes if box.top() - 10.0 < line.row < box.bottom() + 10.0]
+    (left, right), room = line.ends, line.room
+    ways = [replace(line, share=share) for share in (0.5, 0.25, 0.75, 0.3, 0.7)] if line.is_gapped else []
+    ways += [replace(line, outwards=side, share=_PAST) for side in (line.outwards, -line.outwards)]
+    for way in ways:
+        start = way.middle - 0.5 * room if way.is_gapped else right if way.outwards > 0.0 else left - room
+        if not any(box.left() < start + room + 3.0 and box.right() > start - 3.0 for box in struck):
+            return way
+    return line
 
 
 def _upright_witness(painter: QPainter, frame: Frame, scene: Scene, size: SizeLine, place: float, theme: Theme) -> None:
@@ -165,12 +169,32 @@ def _upright_witness(painter: QPainter, frame: Frame, scene: Scene, size: SizeLi
         level_line(painter, place - _OVERSHOOT, foot - _CLEARANCE, frame.row(up), witness)
 
 
-def _level_witness(painter: QPainter, frame: Frame, size: SizeLine, row: float, theme: Theme) -> None:
+def _level_witness(painter: QPainter, frame: Frame, scene: Scene, size: SizeLine, row: float, theme: Theme) -> None:
     witness = pen(theme.colour("edge"), 0.8)
     side = 1.0 if row > frame.bottom else -1.0
     for across, up in (size.start, size.end):
         column = frame.across.x(across)
+        if side > 0.0:
+            # Along an upright wall the line would only blur it: it begins where the wall ends.
+            up = min(up, floor_under(scene.outline, across))
         plumb_line(painter, column, frame.y(up) + side * (_CLEARANCE + 3.0), row + side * _OVERSHOOT, witness)
+
+
+def dimension_obstacles(frame: Frame, scene: Scene) -> list[QRectF]:
+    """Return what no other word may stand on: the texts of the dimensions, and the lines themselves."""
+    found = []
+    for line in (*_upright_lines(frame, scene), *_level_lines(frame, scene)):
+        low, high = line.ends
+        middle, half = line.middle, 0.5 * line.room
+        strips = [(low, high, 3.0), (middle - half, middle + half, 9.0)]
+        if not line.is_gapped:
+            strips[1] = (high, high + 2.0 * half, 9.0) if line.outwards > 0.0 else (low - 2.0 * half, low, 9.0)
+        for start, end, tall in strips:
+            if line.column is None:
+                found.append(QRectF(start, line.row - tall, end - start, 2.0 * tall))
+            else:
+                found.append(QRectF(line.column - tall, -end, 2.0 * tall, end - start))
+    return found
 
 
 def shown_text(frame: Frame, scene: Scene, size: SizeLine) -> str:
@@ -185,7 +209,7 @@ def shown_text(frame: Frame, scene: Scene, size: SizeLine) -> str:
 
 
 @contextmanager
-def _turned(painter: QPainter, line: _Line) -> Iterator[None]:
+def _turned(painter: QPainter, line: Line) -> Iterator[None]:
     """Turn the page for an upright line."""
     if line.column is None:
         yield
@@ -197,7 +221,7 @@ def _turned(painter: QPainter, line: _Line) -> Iterator[None]:
     painter.restore()
 
 
-def _paint_line(painter: QPainter, line: _Line, theme: Theme) -> None:
+def paint_line(painter: QPainter, line: Line, theme: Theme) -> None:
     """Draw the line with a gap for its text, whole where the gap would leave no line."""
     colour = theme.colour("accent" if line.lit else "muted")
     width = 1.6 if line.lit else 1.0
@@ -215,7 +239,7 @@ def _paint_line(painter: QPainter, line: _Line, theme: Theme) -> None:
             painter.drawLine(QLineF(end - _STROKE, line.row + _STROKE, end + _STROKE, line.row - _STROKE))
 
 
-def _write(painter: QPainter, line: _Line, theme: Theme) -> None:
+def write_line(painter: QPainter, line: Line, theme: Theme) -> None:
     """Write the line's text in its gap, or past its outer end."""
     left, right = round(line.ends[0]), round(line.ends[1])
     if line.is_gapped:

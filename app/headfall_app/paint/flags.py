@@ -10,7 +10,7 @@ from PySide6.QtGui import QPainter
 from headfall_app.paint import lettering
 from headfall_app.paint.fonts import text_width
 from headfall_app.paint.kept import Kept, paint_kept
-from headfall_app.paint.layout import FLAG, STAFF, Frame
+from headfall_app.paint.layout import STAFF, Frame
 from headfall_app.paint.levels import STYLES
 from headfall_app.paint.scene import Scene
 from headfall_app.paint.scene_levels import LevelMark
@@ -48,7 +48,7 @@ def placed_flags(frame: Frame, scene: Scene) -> list[Flag]:
     rows = [float(frame.row(mark.level)) for mark in scene.marks]
     centres = spread(rows, TALL + GAP, frame.origin + 0.5 * TALL, frame.height - 0.5 * TALL - 1.0)
     return [
-        Flag(mark, QRectF(frame.flags_left, round(centre - 0.5 * TALL), FLAG, TALL))
+        Flag(mark, QRectF(frame.flags_left, round(centre - 0.5 * TALL), frame.flag, TALL))
         for mark, centre in zip(scene.marks, centres, strict=True)
     ]
 
@@ -99,12 +99,20 @@ def _flag(painter: QPainter, flag: Flag, theme: Theme, hovered: bool, kept: Kept
     ink = theme.colour("on_accent") if filled else theme.colour("ink" if role == "muted" else role)
     middle = flag.box.center().y()
     weight = 600 if filled else 400
-    room = FLAG - 17.0 - text_width(flag.mark.text, 12, 600)
+    room = flag.box.width() - 17.0 - text_width(flag.mark.text, 12, 600)
+    second = flag.mark.second
+    if second and text_width(second, 11) + 8.0 + text_width(flag.mark.name, 11, weight) > room:
+        second = ""
+    if second:
+        room -= text_width(second, 11) + 8.0
     size = 12 if text_width(flag.mark.name, 12, weight) <= room else 11
     called = lettering.elided(flag.mark.name, room, size, weight)
     lettering.write(painter, QPointF(flag.box.left() + 7.0, middle), called, ink, size, weight)
     at = QPointF(flag.box.right() - 6.0, middle)
-    lettering.write(painter, at, flag.mark.text, ink, 12, 600, lettering.RIGHT)
+    figure = lettering.write(painter, at, flag.mark.text, ink, 12, 600, lettering.RIGHT)
+    if second:
+        quiet = ink if filled else theme.colour("muted")
+        lettering.write(painter, QPointF(figure.left() - 8.0, middle), second, quiet, 11, align=lettering.RIGHT)
 
 
 def _paint_frame(painter: QPainter, box: QRectF, theme: Theme, role: str, filled: bool, hovered: bool) -> None:

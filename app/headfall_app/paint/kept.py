@@ -66,7 +66,14 @@ def paint_kept(
 def vessel_key(frame: Frame, scene: Scene, theme: Theme) -> Hashable:
     """Return what a picture of the empty vessel rests on."""
     outline = scene.outline
-    shape = (outline.wall.tobytes(), outline.closed, tuple(outline.tangents), tuple(outline.joints), scene.has_axis)
+    shape = (
+        outline.wall.tobytes(),
+        outline.closed,
+        tuple(outline.tangents),
+        tuple(outline.joints),
+        scene.has_axis,
+        scene.notch,
+    )
     return shape, frame.across, frame.pixels_per_metre, frame.bottom, frame.top, theme
 
 

@@ -6,8 +6,11 @@ from dataclasses import dataclass
 
 from headfall_app.paint.cut import BREAK_WIDTH, Across, shown_stretches
 from headfall_app.paint.dimension_plan import COLUMN, ROW, DimensionPlan, plan_dimensions
-from headfall_app.paint.outline_geometry import extent, outlet_across
+from headfall_app.paint.fonts import text_width
+from headfall_app.paint.level_axis import BREAK_HEIGHT, drawn_depth, left_out
+from headfall_app.paint.outline_geometry import extent
 from headfall_app.paint.scene import Scene
+from headfall_app.paint.scene_levels import LevelMark
 from headfall_app.paint.ticks import TimeAxis, time_axis
 
 TOP_ZONE = 54.0
@@ -17,10 +20,16 @@ LEAST_FLOW = 56.0
 SLIDER = 80.0
 STAFF = 11.0
 LEAD, FLAG, TAIL = 16.0, 104.0, 12.0
+WIDEST_FLAG = 186.0
 STAFF_NUMBERS = 50.0
 RIGHT_EDGE = 12.0
-RECEIVER_ROOM, TAILWATER_ROOM, WEIR_ROOM = 140.0, 74.0, 40.0
+TAILWATER_ROOM, PIPE_ROOM, WEIR_ROOM = 74.0, 96.0, 40.0
+PIPE_STEP = 30.0
+"""How far apart pipes through the wall turn down."""
+RECEIVER_GAP, RECEIVER_LEAST, RECEIVER_EDGE = 66.0, 76.0, 8.0
 JET = 50.0
+STANDPIPE_PLACE = 0.86
+"""Where across its vessel a standpipe stands."""
 FLOW_SHARE = 0.39
 # A vessel that would fill less of the band than this, and less than so many pixels, is drawn cut.
 CUT_SHARE, CUT_HEIGHT = 0.7, 320.0
@@ -48,6 +57,14 @@ class Frame:
     can_be_cut: bool
     needed: float
     under: float = 0.0
+    flag: float = FLAG
+    """How wide the flags are."""
+    lowest: float = 0.0
+    """The lowest level that is drawn [m]."""
+    left_out: tuple[float, float] | None = None
+    """The levels (low, high) below the vessel that are left out, see ``level_axis``."""
+    receiver_gap: float = RECEIVER_GAP
+    """Room between the vessel and a receiving one."""
     origin: float = 0.0
     """The upper end of the page's picture; nil on the screen."""
 
@@ -57,7 +74,10 @@ class Frame:
         return self.y(self.vessel_height)
 
     def y(self, level: float) -> float:
-        """Return the height on the page of a level [m]."""
+        """Return the height on the page of a level [m]; below what is left out it stands that much higher."""
+        if self.left_out is not None and level < self.left_out[1]:
+            low, high = self.left_out
+            return self.bottom - (min(level - low, 0.0) + high) * self.pixels_per_metre + BREAK_HEIGHT
         return self.bottom - level * self.pixels_per_metre
 
     def row(self, level: float) -> int:
@@ -86,7 +106,12 @@ class Frame:
     @property
     def flags_right(self) -> float:
         """Right side of the flags."""
-        return self.flags_left + FLAG
+        return self.flags_left + self.flag
+
+    @property
+    def dimension_rows(self) -> list[float]:
+        """The heights of the dimension lines below the vessel."""
+        return [self.bottom + self.first_row + ROW * index for index in range(self.plan.below_count)]
 
 
 @dataclass(frozen=True, slots=True)
@@ -103,7 +128,7 @@ class _Room:
 def room_about(scene: Scene) -> _Room:
     """Return the room for dimension lines, jets and the stream about the vessel."""
     plan = plan_dimensions(scene)
-    downs = sum(outlet.facing in ("down", "pipe", "standpipe") for outlet in scene.outlets)
+    downs = sum(outlet.facing == "down" or outlet.is_pipe for outlet in scene.outlets)
     first_row = 66.0 if downs else 24.0
     if downs > 2:
         first_row = 96.0
@@ -111,16 +136,30 @@ def room_about(scene: Scene) -> _Room:
     if rows == 0 and (scene.stands or scene.farthest_reach > 0.0):
         rows = 1
     under = first_row + (rows - 1) * ROW + 12.0 if rows else (JET + 12.0 if downs else 12.0)
+    under += _room_for_words(scene)
     left = 32.0 + 26.0 + COLUMN * (plan.column_count - 1) if plan.column_count else 30.0
     return _Room(plan, TOP_ZONE + ROW * plan.above_count, left, first_row, under)
 
 
-def _band_limit(height: float, room: _Room, share: float) -> tuple[float, bool]:
+def _room_for_words(scene: Scene) -> float:
+    """Return the room under what is outside for its level and for a pipe's words, over what a dimension row has."""
+    if scene.receiver is not None:
+        return 18.0
+    piped = [outlet for outlet in scene.outlets if outlet.is_pipe]
+    more = 17.0 if any(outlet.more_text for outlet in piped) else 0.0
+    more += 34.0 * max(sum(outlet.facing == "down" or outlet.is_pipe for outlet in scene.outlets) - 2, 0)
+    if any(outlet.tail is not None for outlet in piped):
+        return more + 34.0
+    return more + (22.0 if any(outlet.tail is not None for outlet in scene.outlets) else 0.0)
+
+
+def _band_limit(height: float, room: _Room, scene: Scene) -> tuple[float, bool]:
     """Return the tallest level band and whether the flow plot has room under it.
 
-    ``share`` is how much of all that is drawn the vessel takes: a pipe that falls needs room below it.
+    The vessel takes a share of all that is drawn: a pipe that falls needs room below it.
     """
-    beside_slider = (height - room.top - room.under - SLIDER - 14.0) * share
+    depth, gap = drawn_depth(scene)
+    beside_slider = (height - room.top - room.under - SLIDER - 14.0 - gap) * scene.height / (scene.height + depth)
     shared = height - room.top - PLOT_GAP - AXIS_ZONE
     with_flow = min(shared / (1.0 + FLOW_SHARE), shared - LEAST_FLOW)
     if with_flow < 130.0:
@@ -143,7 +182,9 @@ def _stretches(scene: Scene, limit: float, band: float, show: str) -> tuple[tupl
     if tall >= CUT_SHARE * band:
         return (whole,), False
     scale = band / scene.height
-    places = [outlet_across(scene.outline, one.station) for one in scene.outlets if one.facing in ("down", "pipe")]
+    places = [one.across for one in scene.outlets if one.facing in ("down", "pipe")]
+    if any(one.facing == "standpipe" for one in scene.outlets):
+        places.append(whole[0] + STANDPIPE_PLACE * (whole[1] - whole[0]))
     shown = limit / scale - reach - BREAK_WIDTH / scale
     stretches = shown_stretches(whole, uniform, places, shown, 46.0 / scale)
     if len(stretches) > 2:
@@ -151,49 +192,87 @@ def _stretches(scene: Scene, limit: float, band: float, show: str) -> tuple[tupl
     return stretches, True
 
 
-def _column(width: float) -> float:
+def _column(width: float, flag: float) -> float:
     """Return how wide the section's column may be: half the stage, less where the plot would starve, more beside a
     plot that has plenty."""
-    rest = width - (STAFF + LEAD + FLAG + TAIL) - RIGHT_EDGE
+    rest = width - (STAFF + LEAD + flag + TAIL) - RIGHT_EDGE
     wide = max(COLUMN_SHARE * width, min(WIDEST_SHARE * width, rest - AMPLE_PLOT))
     return max(min(wide, rest - LEAST_PLOT), LEAST_COLUMN)
 
 
-def _aside(scene: Scene) -> float:
-    """Return the room [px] kept to the right of the vessel for what its outlets discharge into."""
+def flag_width(scene: Scene) -> float:
+    """Return how wide the flags are: as always, wider where a level is told in two forms."""
+    seconds = [mark for mark in scene.marks if mark.second]
+    needed = [31.0 + sum(text_width(*text) for text in _flag_texts(mark)) for mark in seconds]
+    return min(max([FLAG, *needed]), WIDEST_FLAG)
+
+
+def _flag_texts(mark: LevelMark) -> tuple[tuple[str, int, int], ...]:
+    return (mark.name, 12, 400), (mark.second, 11, 400), (mark.text, 12, 600)
+
+
+def receiver_gap(scene: Scene) -> float:
+    """Return the room [px] between the vessel and a receiving one: for a pipe, or for an opening's words."""
+    outlet = scene.outlets[0]
+    if outlet.is_pipe or outlet.facing == "down":
+        return RECEIVER_GAP
+    # Not the flow of the moment: the picture must not shift with the time.
+    flow = f"{scene.display.number(88.8 * scene.display.factor('flow'), 'flow')} {scene.display.unit('flow')} out"
+    return max(RECEIVER_GAP, 30.0 + max(text_width(text, 12) for text in (outlet.size_text, flow)))
+
+
+def aside(scene: Scene) -> float:
+    """Return the room [px] kept to the right of the vessel at least for what its outlets discharge into."""
     if scene.receiver is not None:
-        return RECEIVER_ROOM
-    beside = [outlet for outlet in scene.outlets if outlet.facing not in ("pipe", "standpipe")]
-    if any(outlet.tail is not None for outlet in beside):
-        return TAILWATER_ROOM
-    return WEIR_ROOM if any(outlet.facing == "weir" for outlet in beside) else 0.0
+        return receiver_gap(scene) + RECEIVER_LEAST + RECEIVER_EDGE
+    rooms, step = [0.0], 0.0
+    for outlet in scene.outlets:
+        if outlet.facing == "weir":
+            rooms.append(min(max(WEIR_ROOM, text_width(outlet.size_text, 12) + 10.0), 140.0))
+        if outlet.facing == "pipe" and outlet.by_wall:
+            rooms.append(PIPE_ROOM + step)
+            step += PIPE_STEP
+        if outlet.tail is not None and not outlet.is_pipe:
+            rooms.append(TAILWATER_ROOM)
+    return max(rooms)
+
+
+def room_aside(scene: Scene, scale: float, spare: float) -> float:
+    """Return the room to the right; a receiving vessel takes what is spare until it is as wide as it is true."""
+    least = aside(scene)
+    if scene.receiver is None:
+        return least
+    left, right = extent(scene.receiver.outline)
+    return least + min(max((right - left) * scale - RECEIVER_LEAST, 0.0), max(spare, 0.0))
 
 
 def arrange(width: float, height: float, scene: Scene, show: str = "auto") -> Frame:
     """Return the geometry of the stage; ``show`` is ``auto`` or ``whole`` (never cut)."""
     room = room_about(scene)
-    depth = -scene.lowest
-    band, with_flow = _band_limit(height, room, scene.height / (scene.height + depth))
+    flag = flag_width(scene)
+    band, with_flow = _band_limit(height, room, scene)
     reach = scene.farthest_reach
-    column = _column(width)
-    aside = _aside(scene)
-    limit = max(column - room.left - STAFF_NUMBERS - aside, 80.0)
+    column = _column(width, flag)
+    limit = max(column - room.left - STAFF_NUMBERS - aside(scene), 80.0)
     stretches, can_be_cut = _stretches(scene, limit, band, show)
     shown = sum(end - start for start, end in stretches) + reach
     breaks = (len(stretches) - 1) * BREAK_WIDTH
     scale = min(band / scene.height, (limit - breaks) / shown)
     drawn = shown * scale + breaks
-    taken = max(drawn + aside, LEAST_COLUMN - room.left - STAFF_NUMBERS)
-    left = room.left + 0.5 * (taken - drawn - aside)
+    beside = room_aside(scene, scale, limit - drawn)
+    taken = max(drawn + beside, LEAST_COLUMN - room.left - STAFF_NUMBERS)
+    left = room.left + 0.5 * (taken - drawn - beside)
     bottom = float(round(room.top + scene.height * scale))
     staff_left = float(round(room.left + taken + STAFF_NUMBERS))
-    plot_left = staff_left + STAFF + LEAD + FLAG + TAIL
+    plot_left = staff_left + STAFF + LEAD + flag + TAIL
     plot = (plot_left, bottom - scene.height * scale, max(width - RIGHT_EDGE, plot_left + 40.0), bottom)
     flow = None
     if with_flow:
         tall = max(min(height - bottom - PLOT_GAP - AXIS_ZONE, max(scene.height * scale, LEAST_FLOW)), LEAST_FLOW)
         flow = (plot[0], bottom + PLOT_GAP, plot[2], float(round(bottom + PLOT_GAP + tall)))
     axis_bottom = (flow[3] if flow else bottom) + AXIS_ZONE
+    depth, gap = drawn_depth(scene)
+    under = room.under + depth * scale + gap
     return Frame(
         width=width,
         height=height,
@@ -209,6 +288,10 @@ def arrange(width: float, height: float, scene: Scene, show: str = "auto") -> Fr
         times=time_axis(scene.longest, plot[2] - plot[0]),
         first_row=room.first_row,
         can_be_cut=can_be_cut,
-        needed=max(axis_bottom, bottom + depth * scale + room.under + 14.0 + SLIDER),
-        under=room.under + depth * scale,
+        needed=max(axis_bottom, bottom + under + 14.0 + SLIDER),
+        under=under,
+        flag=flag,
+        lowest=scene.lowest,
+        left_out=left_out(scene),
+        receiver_gap=receiver_gap(scene),
     )

@@ -2,9 +2,15 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
+
 import numpy as np
 
 from headfall.vessel.profile import Outline
+from headfall_app.paint.scene_outlets import DrawnOutlet
+
+_ON_THE_FLOOR = 0.02
+"""How much of the vessel's height an inlet may stand over the floor and still leave by it."""
 
 
 def extent(outline: Outline) -> tuple[float, float]:
@@ -59,11 +65,13 @@ def top_span(outline: Outline) -> tuple[float, float]:
 
 
 def _lowest_across(outline: Outline) -> float:
-    """Return the middle, or beside the lowest corner where an upright vessel's floor falls to one side."""
+    """Return the middle, or beside the lowest corner where an upright vessel's floor or a drum falls to one side."""
     left, right = extent(outline)
     middle = 0.5 * (left + right)
-    if outline.axis != "vertical" or floor_under(outline, middle) < 1e-9:
+    if floor_under(outline, middle) < 1e-9:
         return middle
+    if outline.axis != "vertical":
+        return float(outline.wall[np.argmin(outline.wall[:, 1]), 0])
     corner = float(outline.wall[np.argmin(outline.wall[:, 1]), 0])
     return corner + 0.12 * (right - left) * float(np.sign(middle - corner))
 
@@ -75,3 +83,15 @@ def outlet_across(outline: Outline, station: float | None) -> float:
         return _lowest_across(outline)
     origin = outline.tangents[0] if outline.tangents else left
     return min(max(origin + station, left), right)
+
+
+def placed(outline: Outline, outlet: DrawnOutlet) -> DrawnOutlet:
+    """Return an outlet with its place in a section: across the floor, or by the wall.
+
+    A pipe leaves by the wall where its inlet stands over the floor, or where it rises to its end.
+    """
+    across = outlet_across(outline, outlet.station)
+    if outlet.facing != "pipe":
+        return replace(outlet, across=across)
+    over = outlet.elevation - floor_under(outline, across) > _ON_THE_FLOOR * float(outline.wall[:, 1].max())
+    return replace(outlet, across=across, by_wall=over or outlet.end_level > outlet.elevation)

@@ -12,15 +12,19 @@ from headfall_app.paint.cut import Across
 from headfall_app.paint.flags import paint_flags
 from headfall_app.paint.layout import (
     AXIS_ZONE,
-    FLAG,
     LEAD,
     RIGHT_EDGE,
     STAFF,
     STAFF_NUMBERS,
     TAIL,
     Frame,
+    aside,
+    flag_width,
+    receiver_gap,
     room_about,
+    room_aside,
 )
+from headfall_app.paint.level_axis import drawn_depth, left_out
 from headfall_app.paint.levels import paint_plot_levels
 from headfall_app.paint.outline_geometry import extent
 from headfall_app.paint.scene import Scene
@@ -30,22 +34,24 @@ from headfall_app.paint.theme import Theme
 from headfall_app.paint.ticks import time_axis
 
 _HEAD = 44.0
-_AFTER = STAFF + LEAD + FLAG
+_AFTER = STAFF + LEAD
 
 
 def sketch_scale(width: float, height: float, scene: Scene) -> float:
     """Return the largest scale [px/m] at which the whole sketch fits into a rectangle."""
     room = room_about(scene)
     left, right = extent(scene.outline)
-    wide = width - room.left - STAFF_NUMBERS - _AFTER - 2.0
-    tall = height - (room.top - 54.0 + _HEAD) - room.under
-    return max(min(wide / (right - left + scene.farthest_reach), tall / scene.height), 1e-3)
+    wide = width - room.left - STAFF_NUMBERS - _AFTER - flag_width(scene) - aside(scene) - 2.0
+    depth, gap = drawn_depth(scene)
+    tall = height - (room.top - 54.0 + _HEAD) - room.under - gap
+    return max(min(wide / (right - left + scene.farthest_reach), tall / (scene.height + depth)), 1e-3)
 
 
 def sketch_height(scene: Scene, pixels_per_metre: float) -> float:
     """Return how tall a sketch is at a scale [px]."""
     room = room_about(scene)
-    return room.top - 54.0 + _HEAD + scene.height * pixels_per_metre + room.under
+    depth, gap = drawn_depth(scene)
+    return room.top - 54.0 + _HEAD + (scene.height + depth) * pixels_per_metre + gap + room.under
 
 
 def paint_sketch(
@@ -59,10 +65,15 @@ def paint_sketch(
     room = room_about(scene)
     scale = pixels_per_metre or sketch_scale(rectangle.width(), rectangle.height(), scene)
     left, right = extent(scene.outline)
+    flag = flag_width(scene)
     drawn = (right - left + scene.farthest_reach) * scale
-    spare = max(rectangle.width() - room.left - drawn - STAFF_NUMBERS - _AFTER - 2.0, 0.0)
+    free = rectangle.width() - room.left - drawn - STAFF_NUMBERS - _AFTER - flag - 2.0
+    beside = room_aside(scene, scale, free - aside(scene))
+    spare = max(free - beside, 0.0)
     start = room.left + 0.5 * spare
     bottom = float(round(room.top - 54.0 + _HEAD + scene.height * scale))
+    depth, gap = drawn_depth(scene)
+    under = room.under + depth * scale + gap
     frame = Frame(
         width=rectangle.width(),
         height=max(rectangle.height(), bottom + 20.0),
@@ -72,13 +83,18 @@ def paint_sketch(
         across=Across(((left, right),), start, scale),
         plan=room.plan,
         lines_left=start - 18.0,
-        staff_left=float(round(start + drawn + STAFF_NUMBERS + 0.25 * spare)),
+        staff_left=float(round(start + drawn + beside + STAFF_NUMBERS + 0.25 * spare)),
         plot=None,
         flow=None,
         times=time_axis(scene.longest, 100.0),
         first_row=room.first_row,
         can_be_cut=False,
-        needed=bottom + room.under,
+        needed=bottom + under,
+        under=under,
+        flag=flag,
+        lowest=scene.lowest,
+        left_out=left_out(scene),
+        receiver_gap=receiver_gap(scene),
         origin=-6.0,
     )
     painter.save()
@@ -96,7 +112,8 @@ def _plot_frame(rectangle: QRectF, scene: Scene) -> Frame:
     scale = (bottom - _HEAD) / scene.height
     left, right = extent(scene.outline)
     staff_left = 36.0
-    plot_left = staff_left + STAFF + LEAD + FLAG + TAIL
+    flag = flag_width(scene)
+    plot_left = staff_left + STAFF + LEAD + flag + TAIL
     plot = (plot_left, bottom - scene.height * scale, rectangle.width() - RIGHT_EDGE, bottom)
     return Frame(
         width=rectangle.width(),
@@ -114,6 +131,7 @@ def _plot_frame(rectangle: QRectF, scene: Scene) -> Frame:
         first_row=0.0,
         can_be_cut=False,
         needed=rectangle.height(),
+        flag=flag,
         origin=-6.0,
     )
 
@@ -134,6 +152,7 @@ def paint_curve(painter: QPainter, rectangle: QRectF, scene: Scene, theme: Theme
     words = loose.paint_loose_words(painter, frame, scene, theme)
     curve.paint_remark(painter, frame, scene, theme, words)
     curve.paint_arrival(painter, frame, scene, theme)
+    curve.paint_surge(painter, frame, scene, theme)
     curve.paint_cursor_dot(painter, frame, scene, theme)
     paint_flags(painter, frame, scene, theme)
     _, _, right, _ = frame.plot or (0.0, 0.0, 0.0, 0.0)

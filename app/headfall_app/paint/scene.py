@@ -11,6 +11,7 @@ from headfall.case.model import Box, Case, FlatEnd, Path, SlopedFloor, TableVess
 from headfall.outlet.orifice import OrificeOutlet
 from headfall.quantities import DisplayUnits, duration
 from headfall.vessel.profile import Outline
+from headfall_app.paint.outline_geometry import placed
 from headfall_app.paint.scene_around import (
     DrawnBody,
     DrawnLid,
@@ -48,6 +49,10 @@ class Scene:
 
     outline: Outline
     has_axis: bool
+    tilt: float
+    """How much the vessel rises a length across: of a drum with a fall."""
+    banked: bool
+    """Whether the vessel lies in the ground, so that what leaves by its wall passes through a bank."""
     uniform: tuple[float, float] | None
     height: float
     marks: tuple[LevelMark, ...]
@@ -89,6 +94,11 @@ class Scene:
         return any(outlet.facing == "down" for outlet in self.outlets)
 
     @property
+    def notch(self) -> float | None:
+        """The lowest crest in the wall [m], None where no liquid leaves over one."""
+        return min((outlet.elevation for outlet in self.outlets if outlet.facing == "weir"), default=None)
+
+    @property
     def farthest_reach(self) -> float:
         """How far from the wall a jet lands at most, from a full vessel [m]."""
         return max((outlet.farthest for outlet in self.outlets), default=0.0)
@@ -109,12 +119,14 @@ def scene_of(answers: Answers, display: DisplayUnits, *, now: float | None = Non
     typical, low, high = (level_at(run, time) for run in (answers.curve, answers.curve_low, answers.curve_high))
     share, true = _share_across(answers), answers.system.profile.outline
     outline = _squeezed(true, share)
-    outlets = drawn_outlets(answers, display, typical, lit)
+    outlets = tuple(placed(outline, outlet) for outlet in drawn_outlets(answers, display, typical, lit))
     receiver = drawn_receiver(answers, display, typical)
     settles = answers.equilibrium.level
     return Scene(
         outline=outline,
         has_axis=answers.case.vessel.shape not in ("box", "basin", "table", "stack") and not _slopes(answers.case),
+        tilt=_tilt(answers.case, outline),
+        banked=answers.case.vessel.shape in ("basin", "table"),
         uniform=_uniform(answers.case, outline),
         height=answers.system.profile.height,
         marks=level_marks(answers, display, typical if now is not None else None),
@@ -174,9 +186,16 @@ def _squeezed_sizes(lines: tuple[SizeLine, ...], share: float) -> tuple[SizeLine
 
 
 def _slopes(case: Case) -> bool:
-    """Whether the vessel has no axis to draw: a floor or a drum that slopes."""
-    floor, fall = getattr(case.vessel, "floor", None), getattr(case.vessel, "fall", None)
-    return isinstance(floor, SlopedFloor) or (fall is not None and fall.value > 0)
+    """Whether the vessel's floor slopes, so that it has no axis to draw."""
+    return isinstance(getattr(case.vessel, "floor", None), SlopedFloor)
+
+
+def _tilt(case: Case, outline: Outline) -> float:
+    fall = getattr(case.vessel, "fall", None)
+    along = next((one for one in outline.dimensions if one.field == "length"), None)
+    if fall is None or fall.value <= 0.0 or along is None:
+        return 0.0
+    return (along.end[1] - along.start[1]) / (along.end[0] - along.start[0])
 
 
 def _uniform(case: Case, outline: Outline) -> tuple[float, float] | None:

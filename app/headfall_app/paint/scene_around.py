@@ -58,7 +58,7 @@ def drawn_receiver(answers: Answers, display: DisplayUnits, level: float) -> Dra
 def drawn_bodies(answers: Answers, display: DisplayUnits) -> tuple[DrawnBody, ...]:
     """Return what takes space inside."""
     return tuple(
-        DrawnBody(body.from_.value, body.to.value, display.text(body.volume.value, "volume"))
+        DrawnBody(body.from_.value, body.to.value, f"takes {display.text(body.volume.value, 'volume')}")
         for body in answers.case.vessel.displacement or ()
     )
 

@@ -39,7 +39,21 @@ def size_lines(case: Case, outline: Outline, display: DisplayUnits, lit: Path | 
             lines.append(SizeLine(dimension.start, dimension.end, display.text(length, "length"), None, False))
         else:
             lines.append(SizeLine(dimension.start, dimension.end, typed.text, path, lit == path))
-    return tuple(lines)
+    return _once(lines)
+
+
+def _once(lines: list[SizeLine]) -> tuple[SizeLine, ...]:
+    """Leave out a size that says the same again: of a cylinder on its cone, or of a second head that is alike."""
+    kept: dict[object, SizeLine] = {}
+    for line in lines:
+        key: object = line
+        if line.path is None:
+            key = line.text, line.is_vertical
+        elif not line.is_vertical:
+            key = line.text, line.start[0], line.end[0]
+        if key not in kept or line.lit:
+            kept[key] = line
+    return tuple(kept.values())
 
 
 def _member(value: Any, part: str | int) -> Any:

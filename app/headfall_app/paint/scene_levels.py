@@ -18,7 +18,8 @@ class LevelMark:
     """One level line and its flag.
 
     ``key`` is one of overflow, start, now, settles, stop, outlet; ``path`` is the entry that a drag of the flag
-    changes, None where the flag only shows.
+    changes, None where the flag only shows. ``second`` tells the level in another form beside: its height where
+    ``text`` is no height, else what was typed where that is no height.
     """
 
     key: str
@@ -26,6 +27,7 @@ class LevelMark:
     level: float
     text: str
     path: Path | None = None
+    second: str = ""
 
 
 def level_marks(answers: Answers, display: DisplayUnits, now: float | None) -> tuple[LevelMark, ...]:
@@ -33,7 +35,8 @@ def level_marks(answers: Answers, display: DisplayUnits, now: float | None) -> t
     system = answers.system
 
     def mark(key: str, name: str, level: float, path: Path | None = None) -> LevelMark:
-        return LevelMark(key, name, level, _shown(answers, display, level), path)
+        second = _second(answers, display, key if path else "", level)
+        return LevelMark(key, name, level, _shown(answers, display, level), path, second)
 
     found = [
         mark("overflow", "Overflow", system.overflow, ("levels", "overflow")),
@@ -62,6 +65,14 @@ def _shown(answers: Answers, display: DisplayUnits, level: float) -> str:
             return display.text(volume, "volume")
         return f"{100.0 * volume / system.profile.capacity:.1f}{NO_BREAK}%"
     return display.number(level, "level")
+
+
+def _second(answers: Answers, display: DisplayUnits, key: str, level: float) -> str:
+    """The height beside another form; beside a height the text of a level that was typed in another form."""
+    if _shown(answers, display, level) != display.number(level, "level"):
+        return display.text(level, "level")
+    typed = getattr(answers.case.levels, key) if key else None
+    return "" if typed is None or typed.dimension == "length" else str(typed.text)
 
 
 def _outlet_levels(answers: Answers) -> Iterator[tuple[str, float]]:

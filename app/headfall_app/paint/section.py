@@ -33,11 +33,35 @@ def paint_vessel(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) ->
     drawn.setJoinStyle(Qt.PenJoinStyle.MiterJoin)
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
     painter.setPen(drawn)
+    beyond: QPolygonF | None = None
     if scene.outline.closed:
         painter.drawPolygon(shape)
     else:
-        painter.drawPolyline(shape)
+        cut, beyond = _cut_wall(frame, scene)
+        painter.drawPolyline(cut)
     fill(painter, shape, theme.colour("surface"))
+    if beyond is not None:
+        # The wall behind the notch is seen, not cut.
+        painter.setPen(pen(theme.colour("edge"), 1.0))
+        painter.drawPolyline(beyond)
+
+
+def _cut_wall(frame: Frame, scene: Scene) -> tuple[QPolygonF, QPolygonF | None]:
+    """Return the wall that the section cuts, and the wall behind the notch of a weir in its right side."""
+    wall, crest = scene.outline.wall, scene.notch
+    if crest is None:
+        return wall_shape(frame, scene), None
+    below = np.flatnonzero(wall[:, 1] < crest)
+    if not len(below) or below[-1] == len(wall) - 1:
+        return wall_shape(frame, scene), None
+    last = below[-1]
+    share = (crest - wall[last, 1]) / (wall[last + 1, 1] - wall[last, 1])
+    foot = wall[last] + share * (wall[last + 1] - wall[last])
+
+    def shape(part: np.ndarray) -> QPolygonF:
+        return polygon(frame.across.all_x(part[:, 0]), frame.bottom - part[:, 1] * frame.pixels_per_metre)
+
+    return shape(np.vstack((wall[: last + 1], foot))), shape(np.vstack((foot, wall[last + 1 :])))
 
 
 def paint_liquid(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
@@ -68,7 +92,9 @@ def _fill_between(painter: QPainter, frame: Frame, shape: QPolygonF, top: float,
 def paint_inner_lines(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
     """Paint tangent lines, joints, the axis and the breaks where the middle is left out."""
     thin = pen(theme.colour("edge"), 1.0)
-    for tangent in scene.outline.tangents:
+    if scene.tilt:
+        _paint_tilted(painter, frame, scene, theme)
+    for tangent in scene.outline.tangents if not scene.tilt else ():
         plumb_line(painter, frame.across.x(tangent), frame.top, frame.bottom, thin)
     for joint in scene.outline.joints:
         span = surface_span(scene.outline, joint)
@@ -76,12 +102,41 @@ def paint_inner_lines(painter: QPainter, frame: Frame, scene: Scene, theme: Them
             level_line(painter, frame.across.x(span[0]), frame.across.x(span[1]), frame.row(joint), thin)
     dashed = pen(theme.colour("edge"), 1.0, "axis")
     left, right = extent(scene.outline)
-    if scene.has_axis and scene.outline.axis == "horizontal":
+    if scene.has_axis and scene.outline.axis == "horizontal" and not scene.tilt:
         level_line(painter, frame.across.left - 12.0, frame.across.right + 12.0, frame.row(0.5 * scene.height), dashed)
-    elif scene.has_axis:
+    elif scene.has_axis and not scene.tilt:
         plumb_line(painter, frame.across.x(0.5 * (left + right)), frame.top - 12.0, frame.bottom + 12.0, dashed)
     for start, end in frame.across.breaks:
         _paint_break(painter, frame, start, end, theme)
+
+
+def _paint_tilted(painter: QPainter, frame: Frame, scene: Scene, theme: Theme) -> None:
+    """The tangent lines and the axis of a drum with a fall."""
+    long = math.hypot(1.0, scene.tilt)
+    ahead, up = 1.0 / long, scene.tilt / long
+    bore = max(math.dist(one.start, one.end) for one in scene.outline.dimensions if one.field == "diameter")
+
+    def at(across: float, level: float) -> QPointF:
+        return QPointF(frame.across.x(across), frame.y(level))
+
+    painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
+    painter.setPen(pen(theme.colour("edge"), 1.0))
+    middles = []
+    for tangent in scene.outline.tangents:
+        middle = (tangent, 0.5 * (floor_under(scene.outline, tangent) + roof_over(scene.outline, tangent)))
+        middles.append(middle)
+        half = 0.5 * bore
+        painter.drawLine(
+            at(middle[0] + half * up, middle[1] - half * ahead), at(middle[0] - half * up, middle[1] + half * ahead)
+        )
+    left, right = extent(scene.outline)
+    over = 12.0 / frame.pixels_per_metre
+    across, level = middles[0]
+    painter.setPen(pen(theme.colour("edge"), 1.0, "axis"))
+    painter.drawLine(
+        at(left - over, level + (left - over - across) * scene.tilt),
+        at(right + over, level + (right + over - across) * scene.tilt),
+    )
 
 
 def _paint_break(painter: QPainter, frame: Frame, left: float, right: float, theme: Theme) -> None:

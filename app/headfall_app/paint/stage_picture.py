@@ -8,7 +8,7 @@ from PySide6.QtCore import QPointF
 from PySide6.QtGui import QPainter
 
 from headfall_app.paint import curve, flow, lettering, loose
-from headfall_app.paint.around import paint_bodies, paint_lid, paint_receiver
+from headfall_app.paint.around import paint_bodies, paint_body_words, paint_lid, paint_receiver
 from headfall_app.paint.dimensions import paint_dimensions
 from headfall_app.paint.flags import paint_flags
 from headfall_app.paint.fonts import text_width
@@ -16,6 +16,7 @@ from headfall_app.paint.jets import paint_jets
 from headfall_app.paint.kept import Kept, paint_kept, vessel_box, vessel_key
 from headfall_app.paint.layout import STAFF_NUMBERS, Frame
 from headfall_app.paint.levels import paint_plot_levels, paint_section_levels
+from headfall_app.paint.outside_levels import paint_outside_levels
 from headfall_app.paint.scene import Scene
 from headfall_app.paint.section import (
     WALL,
@@ -64,15 +65,17 @@ def paint_section(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, k
 
     paint_kept(kept, painter, "vessel", key, vessel_box(frame, 12), vessel, theme.colour("surface"))
     paint_liquid(painter, frame, scene, theme)
-    paint_bodies(painter, frame, scene, theme)
+    paint_bodies(painter, frame, scene, theme, kept)
     paint_kept(kept, painter, "inner lines", key, vessel_box(frame, 16), inner_lines)
     ground = ground_line(frame, scene)
     if ground is not None:
         paint_ground(painter, frame, theme, *ground)
     paint_stream(painter, frame, scene, theme)
     paint_section_levels(painter, frame, scene, theme)
-    paint_dimensions(painter, frame, scene, theme, kept)
+    paint_body_words(painter, frame, scene, theme)
     paint_receiver(painter, frame, scene, theme)
+    paint_outside_levels(painter, frame, scene, theme)
+    paint_dimensions(painter, frame, scene, theme, kept)
     paint_jets(painter, frame, scene, theme)
     paint_lid(painter, frame, scene, theme)
 
@@ -102,6 +105,7 @@ def paint_plots(painter: QPainter, frame: Frame, scene: Scene, theme: Theme, foc
     curve.paint_remark(painter, frame, scene, theme, words)
     flow.paint_flow_title(painter, frame, scene, theme)
     curve.paint_arrival(painter, frame, scene, theme)
+    curve.paint_surge(painter, frame, scene, theme)
     curve.paint_cursor_dot(painter, frame, scene, theme, focused)
 
 

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from headfall.answers import Answers, Curve
+from headfall.answers import Answers
 from headfall_app.document import Document
 from headfall_app.paint.layout import Frame, arrange
 from headfall_app.paint.scene import Scene, scene_of
@@ -17,7 +17,7 @@ class ShownScene:
         self._answers: Answers | None = None
         self._scene_key: tuple[object, ...] = ()
         self._frame: Frame | None = None
-        self._curve: Curve | None = None
+        self._framed: Answers | None = None
         self._frame_key: tuple[object, ...] = ()
 
     def scene(self, time: float) -> Scene | None:
@@ -34,7 +34,7 @@ class ShownScene:
     def frame(self, scene: Scene, width: int, height: int, show: str) -> Frame:
         """Return the geometry at a size [logical px]."""
         key = (width, height, show, scene.display.system, self._document.pointed)
-        if self._frame is None or scene.curve is not self._curve or key != self._frame_key:
-            self._curve, self._frame_key = scene.curve, key
+        if self._frame is None or self._answers is not self._framed or key != self._frame_key:
+            self._framed, self._frame_key = self._answers, key
             self._frame = arrange(width, height, scene, show)
         return self._frame

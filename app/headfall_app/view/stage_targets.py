@@ -12,6 +12,7 @@ from headfall_app.paint.dimensions import dimension_boxes
 from headfall_app.paint.flags import placed_flags
 from headfall_app.paint.jets import jet_places, label_box
 from headfall_app.paint.layout import Frame
+from headfall_app.paint.pipe_run import pipe_run
 from headfall_app.paint.scene import Scene
 from headfall_app.paint.thumbnail import thumbnail_box
 from headfall_app.paint.ticks import nice_step
@@ -45,6 +46,9 @@ def target_at(at: QPointF, frame: Frame, scene: Scene) -> Target:
     for index, place in jet_places(frame, scene).items():
         if label_box(frame, place).contains(at):
             return Target("entry", path=scene.outlets[index].path)
+    for outlet in scene.outlets:
+        if outlet.is_pipe and any(box.contains(at) for box in pipe_run(frame, scene, outlet).boxes):
+            return Target("entry", path=outlet.path)
     if cursor_plate(frame, scene).contains(at) or _plots(frame).contains(at):
         return Target("time", "cursor")
     return Target()
